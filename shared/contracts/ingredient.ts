@@ -1,6 +1,6 @@
 import { type Static, Type } from '@sinclair/typebox';
 
-import { ACID_KEYS, COMPOSITION_RANGES } from '../physics/composition.ts';
+import { ACID_KEYS, type AcidKey, COMPOSITION_RANGES } from '../physics/composition.ts';
 import {
   CalendarDate,
   Revision,
@@ -70,19 +70,21 @@ export const US_MAJOR_ALLERGENS = [
   'sesame',
 ] as const satisfies readonly Allergen[];
 
+function acidConcentration(acid: AcidKey) {
+  return Type.Optional(
+    Type.Number({
+      minimum: COMPOSITION_RANGES.acidGPerL.min,
+      maximum: COMPOSITION_RANGES.acidGPerL.max,
+      description: `${acid} acid [g/L]`,
+    }),
+  );
+}
+
 export const AcidsSchema = Type.Object(
-  Object.fromEntries(
-    ACID_KEYS.map((acid) => [
-      acid,
-      Type.Optional(
-        Type.Number({
-          minimum: COMPOSITION_RANGES.acidGPerL.min,
-          maximum: COMPOSITION_RANGES.acidGPerL.max,
-          description: `${acid} acid [g/L]`,
-        }),
-      ),
-    ]),
-  ) as Record<(typeof ACID_KEYS)[number], ReturnType<typeof Type.Optional<ReturnType<typeof Type.Number>>>>,
+  Object.fromEntries(ACID_KEYS.map((acid) => [acid, acidConcentration(acid)])) as Record<
+    AcidKey,
+    ReturnType<typeof acidConcentration>
+  >,
   { additionalProperties: false, description: 'acids by species [g/L]' },
 );
 
