@@ -1,0 +1,3 @@
+export { accountRoutes } from './account.routes.ts';
+export { apiRateLimits } from './account.limits.ts';
+export { createSessionManager } from './lucia.ts';

@@ -1,0 +1,1 @@
+export { glassRoutes } from './glass.routes.ts';

@@ -1,0 +1,1 @@
+export { ingredientRoutes } from './ingredient.routes.ts';

@@ -1,0 +1,1 @@
+export { specRoutes } from './spec.routes.ts';

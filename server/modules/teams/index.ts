@@ -1,0 +1,3 @@
+export { findMembership } from './team.queries.ts';
+export { recordEvent } from './history.service.ts';
+export { teamRoutes } from './team.routes.ts';
