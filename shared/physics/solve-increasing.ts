@@ -1,0 +1,66 @@
+/**
+ * Root of an increasing function, by Newton steps held inside a bracket.
+ *
+ * The bracket is proved first: a function that does not change sign between the ends is refused rather than
+ * answered with an end. A Newton step that leaves the bracket is replaced by halving, so the search ends.
+ * Sources: none (textbook method).
+ */
+
+/** Value of a function and its slope at one point. */
+export interface ValueAndSlope {
+  readonly value: number;
+  readonly slope: number;
+}
+
+export type Root =
+  | { readonly ok: true; readonly x: number; readonly iterations: number }
+  | { readonly ok: false; readonly reason: 'not-bracketed'; readonly atLow: number; readonly atHigh: number }
+  | { readonly ok: false; readonly reason: 'not-converged'; readonly x: number; readonly step: number };
+
+/** More than halving needs to get from any bracket to the last bit. */
+export const MAX_ITERATIONS = 120;
+
+/**
+ * Finds where an increasing function is zero.
+ *
+ * Formula:   x <- x - f(x) / f'(x), or the middle of the bracket where that leaves it
+ * @param input.evaluate    gives value and slope of the function at x
+ * @param input.low         lower end of the bracket, where the function is not positive
+ * @param input.high        upper end of the bracket, where the function is not negative
+ * @param input.start       where to begin
+ * @param input.tolerance   last step at which the search stops [unit of x]
+ * @returns                 the root with the iterations it took, or why there is none
+ * Range:     low <= high; the function is increasing between them
+ * Accuracy:  the last step is at most the tolerance
+ * Limits:    one root is assumed: an increasing function has no more
+ * Source:    textbook method
+ * @example   solveIncreasing({ evaluate: (x) => ({ value: x * x - 2, slope: 2 * x }), low: 0, high: 2, start: 1, tolerance: 1e-12 }).x // 1.414213562373
+ */
+export function solveIncreasing(input: {
+  evaluate: (x: number) => ValueAndSlope;
+  low: number;
+  high: number;
+  start: number;
+  tolerance: number;
+}): Root {
+  const { evaluate, tolerance } = input;
+  let { low, high } = input;
+  const atLow = evaluate(low).value;
+  if (atLow === 0) return { ok: true, x: low, iterations: 0 };
+  const atHigh = evaluate(high).value;
+  if (atHigh === 0) return { ok: true, x: high, iterations: 0 };
+  if (!(atLow < 0 && atHigh > 0)) return { ok: false, reason: 'not-bracketed', atLow, atHigh };
+  let x = input.start > low && input.start < high ? input.start : (low + high) / 2;
+  let step = high - low;
+  for (let iterations = 1; iterations <= MAX_ITERATIONS; iterations += 1) {
+    const { value, slope } = evaluate(x);
+    if (value < 0) low = x;
+    else high = x;
+    const newton = x - value / slope;
+    const next = newton >= low && newton <= high ? newton : (low + high) / 2;
+    step = Math.abs(next - x);
+    x = next;
+    if (step <= tolerance) return { ok: true, x, iterations };
+  }
+  return { ok: false, reason: 'not-converged', x, step };
+}
