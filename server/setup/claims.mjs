@@ -120,3 +120,14 @@ function startOf(pid) {
     return undefined;
   }
 }
+
+/**
+ * Says that a data folder is in use, and how to end that.
+ *
+ * @param {Holder} holder
+ */
+export function describeHolder({ pid, doing, address }) {
+  const what =
+    address === undefined ? `is being started by another "${doing}"` : `is already running at ${address}`;
+  return `Oxymel ${what} (process ${pid}). Use that one, or stop it first: kill ${pid}`;
+}
