@@ -6,6 +6,7 @@ import { ownerOf } from './cluster-folder.mjs';
 import { readRecord, urlOf, writeRecord } from './cluster-record.mjs';
 import { databaseFile } from './paths.mjs';
 import { portOrAnother } from './ports.mjs';
+import { postgresAnswers } from './postgres-answer.mjs';
 import { postgresFor } from './postgres-programs.mjs';
 import { isLockMisleading, runningPostmaster } from './postmaster.mjs';
 import { runQuietly } from './run-command.mjs';
@@ -18,7 +19,7 @@ import { describeFailure, SetupError } from './setup-error.mjs';
 /** After a crash PostgreSQL first replays its log, which may take a while. */
 const START_SECONDS = 120;
 const STOP_SECONDS = 60;
-const ATTEMPTS = 5;
+const ATTEMPTS = 10;
 const RETRY_MS = 500;
 const LOG_LIMIT_BYTES = 5_000_000;
 
@@ -45,9 +46,9 @@ export async function startCluster({ folder, env = process.env, settings = [] })
   }
   const account = ownerOf(folder);
   const bin = postgresFor(env, { major: majorOf(folder), folder });
-  if (isLockMisleading(folder)) rmSync(join(folder, 'postmaster.pid'), { force: true });
   trimLog(folder);
   for (let attempt = 1; ; attempt += 1) {
+    if (isLockMisleading(folder)) rmSync(join(folder, 'postmaster.pid'), { force: true });
     const port = await portOrAnother(attempt === 1 && record.port > 0 ? record.port : undefined);
     writeRecord(folder, { ...record, port }, account);
     const output = tryStart({ folder, bin, account, port, settings });
@@ -91,7 +92,8 @@ async function readyPostmaster(folder) {
   const deadline = Date.now() + START_SECONDS * 1000;
   for (;;) {
     const postmaster = runningPostmaster(folder);
-    if (postmaster === undefined || postmaster.ready) return postmaster;
+    if (postmaster === undefined) return undefined;
+    if (postmaster.ready && (await postgresAnswers(postmaster.port))) return postmaster;
     if (Date.now() > deadline) {
       throw new SetupError(
         `The database in ${folder} (process ${postmaster.pid}) is busy starting or stopping. ` +
@@ -135,7 +137,7 @@ function tryStart({ folder, bin, account, port, settings }) {
  * @param {string} output
  */
 function isPassing(output) {
-  return /could not bind|Address already in use|could not create any TCP|pre-existing shared memory/.test(
+  return /could not bind|Address already in use|could not create any TCP|pre-existing shared memory|lock file .* already exists/.test(
     output,
   );
 }
