@@ -1,0 +1,182 @@
+import type { RouteRecordRaw } from 'vue-router';
+
+declare module 'vue-router' {
+  interface RouteMeta {
+    /** Title of the browser's tab. */
+    title?: string;
+    /** Who may open it: everybody, or only somebody signed in (the default). */
+    access?: 'public';
+  }
+}
+
+/** Pages before signing in. */
+const publicRoutes: RouteRecordRaw = {
+  path: '/',
+  component: () => import('#src/layouts/PlainLayout.vue'),
+  meta: { access: 'public' },
+  children: [
+    {
+      path: 'sign-in',
+      name: 'sign-in',
+      component: () => import('#src/pages/account/SignInPage.vue'),
+      props: (route) => ({ returnTo: localPath(route.query['return']) }),
+      meta: { title: 'Sign in' },
+    },
+    {
+      path: 'sign-up',
+      name: 'sign-up',
+      component: () => import('#src/pages/account/SignUpPage.vue'),
+      meta: { title: 'Sign up' },
+    },
+    {
+      path: 'invitation/:token',
+      name: 'invitation',
+      component: () => import('#src/pages/account/InvitationPage.vue'),
+      props: true,
+      meta: { title: 'Invitation' },
+    },
+  ],
+};
+
+/** Pages of a person, outside any team. */
+const personRoutes: RouteRecordRaw = {
+  path: '/',
+  component: () => import('#src/layouts/AppLayout.vue'),
+  children: [
+    {
+      path: '',
+      name: 'home',
+      component: () => import('#src/pages/account/HomePage.vue'),
+    },
+    {
+      path: 'teams',
+      name: 'teams',
+      component: () => import('#src/pages/account/TeamChoicePage.vue'),
+      meta: { title: 'Teams' },
+    },
+    {
+      path: 'account',
+      name: 'account',
+      component: () => import('#src/pages/account/AccountPage.vue'),
+      meta: { title: 'Account' },
+    },
+  ],
+};
+
+/** Pages of one team. Every page gets `teamId`, and what else its path names, as props. */
+const teamRoutes: RouteRecordRaw = {
+  path: '/t/:teamId',
+  component: () => import('#src/layouts/TeamLayout.vue'),
+  props: true,
+  redirect: (to) => ({ name: 'specs', params: to.params }),
+  children: [
+    {
+      path: 'specs',
+      name: 'specs',
+      component: () => import('#src/pages/specs/SpecListPage.vue'),
+      props: true,
+      meta: { title: 'Specs' },
+    },
+    {
+      path: 'specs/:specId',
+      name: 'spec',
+      component: () => import('#src/pages/specs/SpecEditorPage.vue'),
+      props: true,
+      meta: { title: 'Bench' },
+    },
+    {
+      path: 'specs/:specId/versions',
+      name: 'spec-versions',
+      component: () => import('#src/pages/specs/SpecVersionsPage.vue'),
+      props: true,
+      meta: { title: 'Versions' },
+    },
+    {
+      path: 'versions/:versionId',
+      name: 'version',
+      component: () => import('#src/pages/specs/VersionPage.vue'),
+      props: true,
+      meta: { title: 'Version' },
+    },
+    {
+      path: 'compare',
+      name: 'compare',
+      component: () => import('#src/pages/specs/ComparePage.vue'),
+      props: (route) => ({
+        teamId: route.params['teamId'],
+        versionIds: wordsOf(route.query['v']),
+      }),
+      meta: { title: 'Compare' },
+    },
+    {
+      path: 'ingredients',
+      name: 'ingredients',
+      component: () => import('#src/pages/ingredients/IngredientListPage.vue'),
+      props: true,
+      meta: { title: 'Ingredients' },
+    },
+    {
+      path: 'ingredients/import',
+      name: 'ingredient-import',
+      component: () => import('#src/pages/ingredients/IngredientImportPage.vue'),
+      props: true,
+      meta: { title: 'Import ingredients' },
+    },
+    {
+      path: 'ingredients/new',
+      name: 'ingredient-new',
+      component: () => import('#src/pages/ingredients/IngredientPage.vue'),
+      props: (route) => ({ teamId: route.params['teamId'], ingredientId: null }),
+      meta: { title: 'New ingredient' },
+    },
+    {
+      path: 'ingredients/:ingredientId',
+      name: 'ingredient',
+      component: () => import('#src/pages/ingredients/IngredientPage.vue'),
+      props: true,
+      meta: { title: 'Ingredient' },
+    },
+    {
+      path: 'glasses',
+      name: 'glasses',
+      component: () => import('#src/pages/glasses/GlassListPage.vue'),
+      props: true,
+      meta: { title: 'Glasses' },
+    },
+    {
+      path: 'team',
+      name: 'team',
+      component: () => import('#src/pages/team/TeamPage.vue'),
+      props: true,
+      meta: { title: 'Team' },
+    },
+    {
+      path: 'history',
+      name: 'history',
+      component: () => import('#src/pages/team/HistoryPage.vue'),
+      props: true,
+      meta: { title: 'History' },
+    },
+  ],
+};
+
+export const routes: RouteRecordRaw[] = [
+  publicRoutes,
+  personRoutes,
+  teamRoutes,
+  {
+    path: '/:path(.*)*',
+    name: 'not-found',
+    component: () => import('#src/pages/system/NotFoundPage.vue'),
+    meta: { title: 'Not found', access: 'public' },
+  },
+];
+
+/** A path of this site to go back to; anything that could lead elsewhere is ignored. */
+export function localPath(value: unknown): string | null {
+  return typeof value === 'string' && /^\/(?![/\\])/.test(value) ? value : null;
+}
+
+function wordsOf(value: unknown): string[] {
+  return typeof value === 'string' ? value.split(',').filter((word) => word !== '') : [];
+}
