@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readFileSync, statSync } from 'node:fs';
+import { chmodSync, existsSync, mkdirSync, readFileSync, statSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 
 import { runQuietly } from './run-command.mjs';
@@ -8,6 +8,8 @@ import { SetupError } from './setup-error.mjs';
 /** @typedef {import('./run-command.mjs').Account} Account */
 
 const SYSTEM_FOLDER = '/var/lib/oxymel';
+/** Everyone may pass through, only the owner may change. */
+const PASSABLE = 0o755;
 const POSTGRES_USER = 'postgres';
 
 /**
@@ -78,10 +80,13 @@ export function ownerOf(folder, uid = process.getuid?.() ?? -1) {
 }
 
 /**
- * Makes the folders above a cluster, so that its user can pass through those that are made here.
+ * Makes the folders above a cluster. Those that are made here can be passed through by its user, whatever the umask.
  *
  * @param {string} folder
  */
 export function makeFoldersAbove(folder) {
-  mkdirSync(dirname(folder), { recursive: true, mode: 0o755 });
+  const parent = dirname(folder);
+  const first = mkdirSync(parent, { recursive: true });
+  if (first === undefined) return;
+  for (let made = parent; made.length >= first.length; made = dirname(made)) chmodSync(made, PASSABLE);
 }
