@@ -5,21 +5,15 @@
  * Strength is always referred to 20 C. Sources: oiml-r22 (docs/sources/alcoholometry.md).
  */
 import { R22_A, R22_B, R22_C } from './data/oiml-r22.ts';
-import { requireWithin } from './domain-error.ts';
+import { DomainError, requireWithin } from './domain-error.ts';
+import { solveIncreasing } from './solve-increasing.ts';
 
 /** Temperatures for which the formula was fitted, above the freezing line [C]. */
 export const R22_TEMPERATURE_RANGE_C = { min: -20, max: 40 } as const;
 
-/** Density of pure ethanol at 20 C by the same formula [g/mL]. */
-export const ETHANOL_DENSITY_G_PER_ML = 0.789239;
-
-/** Density of water at 20 C in OIML R 22 [g/mL]; 6 ppm below the CIPM value, kept so that joins are exact. */
-export const WATER_DENSITY_G_PER_ML = 0.99820123;
-
-const KG_PER_M3_IN_G_PER_ML = 1000;
+const G_PER_ML = 1 / 1000;
 const REFERENCE_C = 20;
-const SOLVER_TOLERANCE = 1e-13;
-const SOLVER_MAX_STEPS = 60;
+const MASS_FRACTION_TOLERANCE = 1e-13;
 
 /** a_0 + a_1 x + a_2 x^2 + … */
 function polynomial(coefficients: readonly number[], x: number): number {
@@ -29,15 +23,30 @@ function polynomial(coefficients: readonly number[], x: number): number {
   return sum;
 }
 
-/** The same with no constant term: a_1 x + a_2 x^2 + … */
-function polynomialFromX(coefficients: readonly number[], x: number): number {
-  return x * polynomial(coefficients, x);
+/** A_1 to A_12 by position, written out: it runs some thirty times for every line of every keystroke. */
+const [A1, A2, A3, A4, A5, A6, A7, A8, A9, A10, A11, A12] = R22_A;
+
+function upperTerms(p: number): number {
+  return A6 + p * (A7 + p * (A8 + p * (A9 + p * (A10 + p * (A11 + p * A12)))));
 }
 
-/** Density at 20 C without checks, for the inner loops [g/mL]. */
 function densityAt20(p: number): number {
-  return polynomial(R22_A, p) / KG_PER_M3_IN_G_PER_ML;
+  return (A1 + p * (A2 + p * (A3 + p * (A4 + p * (A5 + p * upperTerms(p)))))) * G_PER_ML;
 }
+
+function upperSlopeTerms(p: number): number {
+  return 5 * A6 + p * (6 * A7 + p * (7 * A8 + p * (8 * A9 + p * (9 * A10 + p * (10 * A11 + p * 11 * A12)))));
+}
+
+function densitySlopeAt20(p: number): number {
+  return (A2 + p * (2 * A3 + p * (3 * A4 + p * (4 * A5 + p * upperSlopeTerms(p))))) * G_PER_ML;
+}
+
+/** Density of pure ethanol at 20 C: the formula at p = 1, 0.7892391 [g/mL]. */
+export const ETHANOL_DENSITY_G_PER_ML = densityAt20(1);
+
+/** Density of water at 20 C in OIML R 22 [g/mL]; 6 ppm below the CIPM value, kept so that joins are exact. */
+export const WATER_DENSITY_G_PER_ML = densityAt20(0);
 
 /**
  * Density of a mixture of ethanol and water.
@@ -50,7 +59,7 @@ function densityAt20(p: number): number {
  * Accuracy:  0.00001 g/mL against the printed tables
  * Limits:    below the freezing line the value is that of a liquid that would not be there
  * Source:    OIML R 22 (1975), general formula
- * @example   densityOfEthanolWater({ ethanolMassFraction: 0.5, temperatureC: 20 }) // 0.91377
+ * @example   densityOfEthanolWater({ ethanolMassFraction: 0.3, temperatureC: -20 }) // 0.97491
  */
 export function densityOfEthanolWater(input: { ethanolMassFraction: number; temperatureC: number }): number {
   const p = requireWithin({
@@ -65,11 +74,27 @@ export function densityOfEthanolWater(input: { ethanolMassFraction: number; temp
     ...R22_TEMPERATURE_RANGE_C,
   });
   const offset = t - REFERENCE_C;
-  let rho = polynomial(R22_A, p) + polynomialFromX(R22_B, offset);
+  let rho = polynomial(R22_A, p) + offset * polynomial(R22_B, offset);
   R22_C.forEach((row, index) => {
-    rho += polynomialFromX(row, p) * offset ** (index + 1);
+    rho += p * polynomial(row, p) * offset ** (index + 1);
   });
-  return rho / KG_PER_M3_IN_G_PER_ML;
+  return rho * G_PER_ML;
+}
+
+/**
+ * Density at 20 C of a mixture of ethanol and water, unchecked: for inner loops.
+ *
+ * Formula:   rho(p) = A_1 + sum A_k p^(k-1)
+ * @param ethanolMassFraction   ethanol mass per mass of mixture [0 to 1]
+ * @returns                     density at 20 C [g/mL]
+ * Range:     0 <= ethanolMassFraction <= 1, which is not checked
+ * Accuracy:  0.00001 g/mL against the printed tables
+ * Limits:    20 C only
+ * Source:    OIML R 22 (1975), general formula
+ * @example   ethanolWaterDensityAt20(0.5) // 0.91377
+ */
+export function ethanolWaterDensityAt20(ethanolMassFraction: number): number {
+  return densityAt20(ethanolMassFraction);
 }
 
 /**
@@ -96,7 +121,7 @@ export function volumeFractionFromMassFraction(ethanolMassFraction: number): num
  * @param ethanolVolumeFraction   ethanol volume fraction at 20 C [0 to 1]
  * @returns                       ethanol mass per mass of mixture [0 to 1]
  * Range:     0 <= ethanolVolumeFraction <= 1
- * Accuracy:  inverse of the formula to 1e-12
+ * Accuracy:  inverse of volumeFractionFromMassFraction to 1e-12
  * Limits:    water and ethanol only
  * Source:    OIML R 22 (1975), Table III
  * @example   massFractionFromVolumeFraction(0.5) // 0.4243
@@ -111,28 +136,55 @@ export function massFractionFromVolumeFraction(ethanolVolumeFraction: number): n
   return massFractionAt20(q);
 }
 
-/** The inverse without a check. q(0) = 0 and q(1) = 1 bracket the root, and q rises with p throughout. */
-export function massFractionAt20(q: number): number {
-  let low = 0;
-  let high = 1;
-  let p = q * (0.79 + 0.21 * q);
-  for (let step = 0; step < SOLVER_MAX_STEPS; step += 1) {
-    const excess = (p * densityAt20(p)) / ETHANOL_DENSITY_G_PER_ML - q;
-    if (excess > 0) high = p;
-    else low = p;
-    const slope = (densityAt20(p) + p * densitySlopeAt20(p)) / ETHANOL_DENSITY_G_PER_ML;
-    let next = p - excess / slope;
-    if (!(next >= low && next <= high)) next = (low + high) / 2;
-    if (Math.abs(next - p) <= SOLVER_TOLERANCE) return next;
-    p = next;
-  }
-  return p;
+/** p for q to 0.004: a place to start, of no influence on the result. */
+function firstGuess(q: number): number {
+  return q * (0.7813 + q * (0.1582 + q * (-0.1457 + q * 0.2024)));
 }
 
-function densitySlopeAt20(p: number): number {
-  let sum = 0;
-  for (let index = R22_A.length - 1; index >= 1; index -= 1) sum = sum * p + index * (R22_A[index] ?? 0);
-  return sum / KG_PER_M3_IN_G_PER_ML;
+/** From within 0.004 three Newton steps reach the last bit; more are allowed. */
+const MAX_NEWTON_STEPS = 20;
+
+/**
+ * The same without a check. q(p) rises throughout from q(0) = 0 to q(1) = 1, with a slope between 0.6 and 1.3, so there is one
+ * root and Newton steps from nearby find it. Only nonsense does not converge.
+ */
+function massFractionAt20(q: number): number {
+  let p = firstGuess(q);
+  for (let steps = 0; steps < MAX_NEWTON_STEPS; steps += 1) {
+    const density = densityAt20(p);
+    const excess = p * density - q * ETHANOL_DENSITY_G_PER_ML;
+    const step = excess / (density + p * densitySlopeAt20(p));
+    p -= step;
+    if (Math.abs(step) <= MASS_FRACTION_TOLERANCE) return p;
+  }
+  throw new DomainError({ quantity: 'ethanolVolumeFraction', value: q, min: 0, max: 1 });
+}
+
+/** Density at 20 C with its slope against strength. */
+export interface DensityAtStrength {
+  readonly densityGPerMl: number;
+  /** Change of density with volume fraction [g/mL for 1]. */
+  readonly slopeGPerMl: number;
+}
+
+/**
+ * Density at 20 C of a mixture of known strength, with its slope, unchecked: for inner loops.
+ *
+ * Formula:   rho(p(q)) and (drho/dp) / (dq/dp)
+ * @param ethanolVolumeFraction   ethanol volume fraction at 20 C [0 to 1]
+ * @returns                       density [g/mL] and its slope [g/mL for a change of strength by 1]
+ * Range:     0 <= ethanolVolumeFraction <= 1
+ * Accuracy:  0.00001 g/mL against the printed tables
+ * Limits:    water and ethanol only
+ * Source:    OIML R 22 (1975), Table IV
+ * @example   densityAtStrength(0.4).densityGPerMl // 0.94805
+ */
+export function densityAtStrength(ethanolVolumeFraction: number): DensityAtStrength {
+  const p = massFractionAt20(ethanolVolumeFraction);
+  const densityGPerMl = densityAt20(p);
+  const slopeOfDensity = densitySlopeAt20(p);
+  const slopeOfStrength = (densityGPerMl + p * slopeOfDensity) / ETHANOL_DENSITY_G_PER_ML;
+  return { densityGPerMl, slopeGPerMl: slopeOfDensity / slopeOfStrength };
 }
 
 /**
@@ -148,5 +200,34 @@ function densitySlopeAt20(p: number): number {
  * @example   densityFromVolumeFraction(0.4) // 0.94805
  */
 export function densityFromVolumeFraction(ethanolVolumeFraction: number): number {
-  return densityAt20(massFractionFromVolumeFraction(ethanolVolumeFraction));
+  return ethanolWaterDensityAt20(massFractionFromVolumeFraction(ethanolVolumeFraction));
+}
+
+/**
+ * Ethanol mass fraction of a mixture of known density at 20 C.
+ *
+ * Formula:   the p that solves rho(p, 20) = density
+ * @param densityGPerMl   density at 20 C [g/mL]
+ * @returns               ethanol mass per mass of mixture [0 to 1]
+ * Range:     0.7892391 <= densityGPerMl <= 0.99820123
+ * Accuracy:  inverse of the formula to 1e-12
+ * Limits:    with sugar in the liquid this is an apparent strength, too low
+ * Source:    OIML R 22 (1975), Table VI
+ * @example   massFractionFromDensity(0.9) // 0.5612
+ */
+export function massFractionFromDensity(densityGPerMl: number): number {
+  const bounds = { min: ETHANOL_DENSITY_G_PER_ML, max: WATER_DENSITY_G_PER_ML };
+  const density = requireWithin({ quantity: 'densityGPerMl', value: densityGPerMl, ...bounds });
+  const root = solveIncreasing({
+    evaluate: (p) => ({
+      value: density - densityAt20(p),
+      slope: -densitySlopeAt20(p),
+    }),
+    low: 0,
+    high: 1,
+    start: (bounds.max - density) / (bounds.max - bounds.min),
+    tolerance: MASS_FRACTION_TOLERANCE,
+  });
+  if (!root.ok) throw new DomainError({ quantity: 'densityGPerMl', value: densityGPerMl, ...bounds });
+  return root.x;
 }

@@ -29,6 +29,7 @@ export const MAX_ITERATIONS = 120;
  * @param input.high        upper end of the bracket, where the function is not negative
  * @param input.start       where to begin
  * @param input.tolerance   last step at which the search stops [unit of x]
+ * @param input.isBracketProved   the caller has shown that the ends bracket a root: they are not evaluated again
  * @returns                 the root with the iterations it took, or why there is none
  * Range:     low <= high; the function is increasing between them
  * Accuracy:  the last step is at most the tolerance
@@ -42,14 +43,17 @@ export function solveIncreasing(input: {
   high: number;
   start: number;
   tolerance: number;
+  isBracketProved?: boolean;
 }): Root {
   const { evaluate, tolerance } = input;
   let { low, high } = input;
-  const atLow = evaluate(low).value;
-  if (atLow === 0) return { ok: true, x: low, iterations: 0 };
-  const atHigh = evaluate(high).value;
-  if (atHigh === 0) return { ok: true, x: high, iterations: 0 };
-  if (!(atLow < 0 && atHigh > 0)) return { ok: false, reason: 'not-bracketed', atLow, atHigh };
+  if (input.isBracketProved !== true) {
+    const atLow = evaluate(low).value;
+    if (atLow === 0) return { ok: true, x: low, iterations: 0 };
+    const atHigh = evaluate(high).value;
+    if (atHigh === 0) return { ok: true, x: high, iterations: 0 };
+    if (!(atLow < 0 && atHigh > 0)) return { ok: false, reason: 'not-bracketed', atLow, atHigh };
+  }
   let x = input.start > low && input.start < high ? input.start : (low + high) / 2;
   let step = high - low;
   for (let iterations = 1; iterations <= MAX_ITERATIONS; iterations += 1) {

@@ -4,10 +4,10 @@
  */
 
 /** A_1 to A_12: density at 20 C as a polynomial of p [kg/m3]. */
-export const R22_A: readonly number[] = [
+export const R22_A = [
   998.20123, -192.9769495, 389.1238958, -1668.103923, 13522.15441, -88292.78388, 306287.4042, -613838.1234,
   747017.2998, -547846.1354, 223446.0334, -39032.85426,
-];
+] as const;
 
 /** B_1 to B_6: water's density against (t - 20) [kg/(m3 C^k)]. */
 export const R22_B: readonly number[] = [
