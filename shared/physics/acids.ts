@@ -59,6 +59,18 @@ export const ACIDS: Readonly<Record<AcidKey, Acid>> = {
 /** Acids by species, in grams, g/L or any one unit of amount; an acid that is not named is absent. */
 export type AcidAmounts = Readonly<Partial<Record<AcidKey, number>>>;
 
+/** No acid at all. */
+export const NO_ACIDS: Readonly<Record<AcidKey, number>> = {
+  citric: 0,
+  malic: 0,
+  tartaric: 0,
+  lactic: 0,
+  acetic: 0,
+  phosphoric: 0,
+  succinic: 0,
+  ascorbic: 0,
+};
+
 /** Adds up something of every acid; plain loop, since it runs for every line of every keystroke. */
 function sumOverAcids(amounts: AcidAmounts, weight: (acid: Acid) => number): number {
   let sum = 0;

@@ -5,8 +5,8 @@
  * Assumes 20 C throughout, and that nothing reacts, foams or evaporates. Sources: docs/decisions/0003-mass-first.md,
  * docs/sources/ternary.md.
  */
-import { apparentVolumeOfAcidsMl, totalAcid } from './acids.ts';
-import { ACID_KEYS, type AcidKey } from './composition.ts';
+import { NO_ACIDS, apparentVolumeOfAcidsMl, totalAcid } from './acids.ts';
+import { ACID_KEYS } from './composition.ts';
 import { type Contents, REST_VOLUME_ML_PER_G } from './contents.ts';
 import { requireNotNegative } from './domain-error.ts';
 import { WATER_DENSITY_G_PER_ML } from './ethanol-water.ts';
@@ -36,7 +36,7 @@ export interface Portion {
  */
 export function mixContents(portions: readonly Portion[]): Contents {
   const sum = { ethanolG: 0, waterG: 0, sugarG: 0, restG: 0, residualMl: 0 };
-  const acidsG = noAcids();
+  const acidsG = { ...NO_ACIDS };
   for (const { contentsPerMl: part, volumeMl } of portions) {
     requireNotNegative({ quantity: 'volumeMl', value: volumeMl });
     sum.ethanolG += part.ethanolG * volumeMl;
@@ -49,16 +49,12 @@ export function mixContents(portions: readonly Portion[]): Contents {
   return { ...sum, acidsG };
 }
 
-function noAcids(): Record<AcidKey, number> {
-  return { citric: 0, malic: 0, tartaric: 0, lactic: 0, acetic: 0, phosphoric: 0, succinic: 0, ascorbic: 0 };
-}
-
 /** One millilitre of water at 20 C. */
 export const WATER_CONTENTS_PER_ML: Contents = {
   ethanolG: 0,
   waterG: WATER_DENSITY_G_PER_ML,
   sugarG: 0,
-  acidsG: noAcids(),
+  acidsG: NO_ACIDS,
   restG: 0,
   residualMl: 0,
 };
