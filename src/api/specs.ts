@@ -1,4 +1,12 @@
-import type { Spec, SpecCreate, SpecListQuery, SpecPage } from '#shared/contracts/spec.ts';
+import type {
+  Branch,
+  DraftFromVersion,
+  Spec,
+  SpecCreate,
+  SpecListQuery,
+  SpecPage,
+  SpecUpdate,
+} from '#shared/contracts/spec.ts';
 import { request } from './http.ts';
 
 function specsPath(teamId: string): string {
@@ -15,4 +23,36 @@ export function createSpec(teamId: string, body: SpecCreate): Promise<Spec> {
 
 export function getSpec(teamId: string, specId: string, signal?: AbortSignal): Promise<Spec> {
   return request({ method: 'GET', path: `${specsPath(teamId)}/${specId}`, signal });
+}
+
+/** A change of the name or of what the spec is for; the draft has a guard of its own. */
+type BasedSpec = Pick<Spec, 'id' | 'revision'>;
+
+export function updateSpec(teamId: string, based: BasedSpec, body: SpecUpdate): Promise<Spec> {
+  return request({ method: 'PUT', path: `${specsPath(teamId)}/${based.id}`, body, ifMatch: based.revision });
+}
+
+export function retireSpec(teamId: string, based: BasedSpec): Promise<Spec> {
+  const path = `${specsPath(teamId)}/${based.id}/retire`;
+  return request({ method: 'POST', path, ifMatch: based.revision });
+}
+
+export function restoreSpec(teamId: string, based: BasedSpec): Promise<Spec> {
+  const path = `${specsPath(teamId)}/${based.id}/restore`;
+  return request({ method: 'POST', path, ifMatch: based.revision });
+}
+
+/** A new variant that starts from a version. */
+export function branchSpec(teamId: string, specId: string, body: Branch): Promise<Spec> {
+  return request({ method: 'POST', path: `${specsPath(teamId)}/${specId}/branch`, body });
+}
+
+/** Puts a version's contents in place of the draft's. */
+export function startDraftFromVersion(
+  teamId: string,
+  based: Pick<Spec, 'id' | 'draftRevision'>,
+  body: DraftFromVersion,
+): Promise<Spec> {
+  const path = `${specsPath(teamId)}/${based.id}/draft/from-version`;
+  return request({ method: 'POST', path, body, ifMatch: based.draftRevision });
 }
