@@ -6,17 +6,19 @@ import { createOrm, migrate } from './db/orm.ts';
 import { DEMO_SIGN_INS, isEmpty, seedDemo } from './db/seed.ts';
 import { createSessionManager } from './modules/accounts/index.ts';
 import { listen, stopOnSignals } from './serving.ts';
+import { holdOwnCluster } from './setup/held-cluster.ts';
 import { explainStartFailure } from './setup/start-failures.ts';
 
 /** Starts the server: settings, database, demo team, listening. Any failure is told in one message and ends it. */
 async function main(): Promise<void> {
   const config = loadConfig(process.env);
+  const held = holdOwnCluster(config);
   const logger = pino({
     level: config.logLevel,
     redact: ['req.headers.cookie', 'req.headers.authorization', 'res.headers["set-cookie"]'],
   });
   const orm = await createOrm({ databaseUrl: config.databaseUrl });
-  await orm.connect();
+  await orm.em.getConnection().execute('select 1');
   const migrations = await migrate(orm);
   if (migrations.length > 0) console.log(`Database brought up to date: ${migrations.join(', ')}.`);
   const seeded = config.seedDemo && (await isEmpty(orm));
@@ -26,6 +28,7 @@ async function main(): Promise<void> {
   const app = createApp({ config, orm, logger, sessions, now: () => new Date() });
   const server = await listen(app, config);
   stopOnSignals({ server, orm, config });
+  held.serving();
 
   console.log(`\nOxymel answers at http://${config.host}:${config.port}\n`);
   if (config.seedDemo) printSignIns();

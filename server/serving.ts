@@ -29,6 +29,7 @@ export function stopOnSignals(running: { server: Server; orm: MikroORM; config: 
   };
   process.on('SIGINT', stop);
   process.on('SIGTERM', stop);
+  process.on('SIGHUP', stop);
 }
 
 async function stopAll({
