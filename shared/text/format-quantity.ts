@@ -146,7 +146,7 @@ export function formatStandardDrinks(count: number): string {
 
 /** 9/5 of the degree and 32 above, by definition. */
 export const FAHRENHEIT_PER_CELSIUS = 1.8;
-const FAHRENHEIT_AT_ZERO_C = 32;
+export const FAHRENHEIT_AT_ZERO_C = 32;
 
 function fahrenheitFromCelsius(temperatureC: number): number {
   return temperatureC * FAHRENHEIT_PER_CELSIUS + FAHRENHEIT_AT_ZERO_C;

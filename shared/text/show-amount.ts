@@ -92,3 +92,11 @@ function roundTo(input: { readonly value: number; readonly decimals: number }): 
   const rounded = Number(input.value.toFixed(input.decimals));
   return rounded > 0 ? rounded : Number(input.value.toPrecision(2));
 }
+
+/** Digits that an amount is worked out to: a twentieth of a per cent, finer than any jigger or bar scale. */
+const AMOUNT_DIGITS = 4;
+
+/** A computed amount with the digits that people can use: 16.0714 ml becomes 16.07 ml. */
+export function roundedAmount(amount: Amount): Amount {
+  return { value: Number(amount.value.toPrecision(AMOUNT_DIGITS)), unit: amount.unit };
+}
