@@ -4,7 +4,7 @@ import type { Page } from '#shared/contracts/common.ts';
 import type { LoadStatus } from './useLoaded.ts';
 
 export interface KeysetList<Item> {
-  /** All pages loaded so far, one after the other. */
+  /** All pages loaded so far, one after the other. None are left when a load from the first page on fails. */
   items: ShallowRef<readonly Item[]>;
   status: Ref<LoadStatus>;
   failure: ShallowRef<unknown>;
@@ -37,6 +37,7 @@ export function useKeysetList<Item>(
       status.value = 'ready';
     } catch (error) {
       if (own.signal.aborted) return;
+      if (cursor === null) items.value = [];
       failure.value = error;
       status.value = 'failed';
     }

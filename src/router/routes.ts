@@ -1,4 +1,7 @@
-import type { RouteRecordRaw } from 'vue-router';
+import type { RouteLocationRaw, RouteRecordRaw } from 'vue-router';
+
+import { usePreferencesStore } from '#src/stores/preferences.ts';
+import { useSessionStore } from '#src/stores/session.ts';
 
 declare module 'vue-router' {
   interface RouteMeta {
@@ -26,6 +29,7 @@ const publicRoutes: RouteRecordRaw = {
       path: 'sign-up',
       name: 'sign-up',
       component: () => import('#src/pages/account/SignUpPage.vue'),
+      props: (route) => ({ returnTo: localPath(route.query['return']) }),
       meta: { title: 'Sign up' },
     },
     {
@@ -46,7 +50,8 @@ const personRoutes: RouteRecordRaw = {
     {
       path: '',
       name: 'home',
-      component: () => import('#src/pages/account/HomePage.vue'),
+      component: () => import('#src/pages/account/TeamChoicePage.vue'),
+      beforeEnter: toLastTeam,
     },
     {
       path: 'teams',
@@ -171,6 +176,15 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Not found', access: 'public' },
   },
 ];
+
+/** The start page is the team that was open last, or the only one there is. */
+function toLastTeam(): RouteLocationRaw | true {
+  const { teams } = useSessionStore();
+  const { lastTeamId } = usePreferencesStore();
+  const team =
+    teams.find(({ teamId }) => teamId === lastTeamId) ?? (teams.length === 1 ? teams[0] : undefined);
+  return team === undefined ? true : { name: 'specs', params: { teamId: team.teamId } };
+}
 
 /** A path of this site to go back to; anything that could lead elsewhere is ignored. */
 export function localPath(value: unknown): string | null {
