@@ -7,6 +7,7 @@ import { Glass } from '../modules/glasses/glass.entity.ts';
 import { Ingredient } from '../modules/ingredients/ingredient.entity.ts';
 import { Spec, SpecVersion, TastingNote } from '../modules/specs/spec.entity.ts';
 import { AuditEvent, Invitation, Membership, Team } from '../modules/teams/team.entity.ts';
+import { connectionOptionsOf } from './connection-options.ts';
 import { migrationsList } from './migrations/index.ts';
 
 export interface OrmOptions {
@@ -34,6 +35,7 @@ export function createOrm(options: OrmOptions): Promise<MikroORM> {
 export function ormConfig({ databaseUrl, log, poolMax = 10 }: OrmOptions): Options {
   return {
     clientUrl: databaseUrl,
+    driverOptions: { connection: connectionOptionsOf(databaseUrl) },
     entities: [
       User,
       Session,

@@ -76,6 +76,12 @@ function adviceForCause(cause: Cause): string | undefined {
   if (/does not support SSL|SSL off|no encryption/i.test(message)) {
     return 'The database and DATABASE_URL do not agree about encryption. Add or remove ?sslmode=require.';
   }
+  if (/^timeout expired|connection timeout|Timeout acquiring a connection/i.test(message)) {
+    return ADVICE_BY_CODE['ETIMEDOUT'];
+  }
+  if (/certificate/i.test(message)) {
+    return 'The certificate of the database is not trusted. Name its authority in NODE_EXTRA_CA_CERTS.';
+  }
   return ADVICE_BY_CODE[textOf(cause['code'])] ?? adviceFor(`${textOf(cause['code'])} ${message}`);
 }
 

@@ -52,6 +52,8 @@ describe('the message of a start that failed', () => {
     ['a missing database', anError('x', { code: '3D000' }), 'does not exist'],
     ['a full disk of the database', anError('x', { code: '53100' }), 'disk of the database is full'],
     ['a full disk here', anError('write', { code: 'ENOSPC' }), 'The disk is full'],
+    ['a silent database', anError('timeout expired'), 'does not answer: the host'],
+    ['a certificate', anError('self-signed certificate', { code: 'X' }), 'NODE_EXTRA_CA_CERTS'],
     ['encryption', anError('The server does not support SSL connections'), 'encryption'],
   ])('%s', (_title, error, expected) => {
     expect(explainStartFailure(error)).toContain(expected);
