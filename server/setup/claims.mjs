@@ -27,8 +27,8 @@ export function claim(file, claimant) {
   mkdirSync(dirname(file), { recursive: true });
   const own = { pid: process.pid, startedAt: startOf(process.pid) ?? '', ...claimant };
   const draft = `${file}.${process.pid}`;
-  writeFileSync(draft, JSON.stringify(own), { mode: 0o644 });
   try {
+    writeFileSync(draft, JSON.stringify(own), { mode: 0o644 });
     for (let attempt = 0; attempt < ATTEMPTS; attempt += 1) {
       if (linked(draft, file)) return { ok: true, release: () => releaseOwn(file) };
       const holder = holderOf(file);

@@ -61,6 +61,8 @@ export async function ensureNodePackages(root) {
       const { code, output } = await run(...npmCommand(['ci', '--include=dev', '--no-audit', '--no-fund']), {
         cwd: root,
         show: true,
+        // npm warns of files it could not unpack, and then ends as if all were well.
+        failsOn: /TAR_ENTRY_ERROR/,
       });
       if (code !== 0)
         throw new SetupError(describeFailure({ doing: 'Installing packages (npm ci)', output }));

@@ -12,7 +12,8 @@ import { spawn, spawnSync } from 'node:child_process';
  * @property {NodeJS.ProcessEnv} [env]
  * @property {Account} [account]
  * @property {string} [input] given to the command on its standard input
- * @property {boolean} [show] whether the command's output is passed on to the terminal
+ * @property {boolean} [show] whether what it prints, besides warnings and errors, is passed on
+ * @property {RegExp} [failsOn] output that means failure even when the command then ends well
  */
 
 /** @typedef {{ code: number, output: string }} RunResult */
@@ -30,16 +31,18 @@ const running = new Set();
  * @param {RunOptions} [options]
  * @returns {Promise<RunResult>}
  */
-export function run(command, args, { cwd, env, account, input, show = false } = {}) {
+export function run(command, args, { cwd, env, account, input, show = false, failsOn } = {}) {
   return new Promise((resolve) => {
     const child = spawn(command, args, { cwd, env, ...account, stdio: ['pipe', 'pipe', 'pipe'] });
     running.add(child);
     let output = '';
+    let failure = '';
     const keep = (/** @type {Buffer} */ chunk) => {
       output = (output + chunk.toString()).slice(-KEPT_OUTPUT_CHARACTERS);
-      if (show) process.stdout.write(chunk);
+      if (failure === '' && failsOn?.test(output)) failure = output;
     };
     child.stdout.on('data', keep);
+    if (show) child.stdout.pipe(process.stdout, { end: false });
     child.stderr.on('data', keep);
     child.stdin.on('error', () => undefined);
     child.stdin.end(input ?? '');
@@ -49,7 +52,9 @@ export function run(command, args, { cwd, env, account, input, show = false } = 
     });
     child.on('close', (code, signal) => {
       running.delete(child);
-      resolve({ code: code ?? 1, output: signal === null ? output : `${output}\nended by ${signal}` });
+      const ending = signal === null ? '' : `\nended by ${signal}`;
+      const failedQuietly = code === 0 && failure !== '';
+      resolve({ code: failedQuietly ? 1 : (code ?? 1), output: failure + output + ending });
     });
   });
 }

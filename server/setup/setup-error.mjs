@@ -10,7 +10,8 @@ export class SetupError extends Error {
 /** What to do about the failures that any tool may meet, known by what it printed. */
 const KNOWN_CAUSES = [
   {
-    pattern: /ENOSPC|No space left on device|disk full|could not extend file|write error.*space/i,
+    pattern:
+      /ENOSPC|No space left on device|disk full|could not extend file|Check free disk space|write error.*space/i,
     advice: 'The disk is full. Free some space and start again; nothing half done is kept.',
   },
   {
