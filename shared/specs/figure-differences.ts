@@ -27,7 +27,7 @@ export const FIGURE_LABELS: Readonly<Record<ComparedFigure, string>> = {
   abvFraction: 'final ABV',
   sugarGPerL: 'final sugar',
   acidCitricGPerL: 'final acid',
-  sugarAcidRatio: 'sugar : acid',
+  sugarAcidRatio: 'ratio',
   dilutionFraction: 'dilution',
   undilutedMl: 'undiluted volume',
   undilutedAbvFraction: 'undiluted ABV',
