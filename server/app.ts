@@ -9,7 +9,6 @@ import { errorHandler } from './http/error-handler.ts';
 import { requireOwnOrigin, securityHeaders } from './http/guards.ts';
 import { assignRequestId, mountRoutes } from './http/mount.ts';
 import { problems } from './http/problems.ts';
-import { apiRateLimits } from './modules/accounts/index.ts';
 import { apiRoutes } from './routes.ts';
 
 /** Builds the application. It does not listen: the server and the tests do. */
@@ -33,7 +32,6 @@ export function createApp(deps: Dependencies): Express {
   app.use(compression());
 
   app.use('/api', requireOwnOrigin(deps.config));
-  for (const limit of apiRateLimits(deps)) app.use(limit.path, ...limit.handlers);
   app.use('/api', mountRoutes(apiRoutes(), deps));
   app.use('/api', () => {
     throw problems.notFound('address', 'of the API');

@@ -56,7 +56,7 @@ function toProblemError(error: unknown): ProblemError {
   if (typeof error === 'object' && error !== null) {
     const { type, status } = error as { type?: unknown; status?: unknown };
     const known = typeof type === 'string' ? BODY_PROBLEMS[type] : undefined;
-    if (known) return known(error as { limit?: number });
+    if (known) return known(error);
     if (status === 400) return problems.malformedRequest('The request cannot be read.');
   }
   return problems.internal();

@@ -2,12 +2,12 @@ import { randomUUID } from 'node:crypto';
 
 import express, { type Request, type RequestHandler, type Response, Router } from 'express';
 
-import { hasPermission } from '#shared/contracts/roles.ts';
-
 import type { Dependencies } from '../dependencies.ts';
-import { findMembership } from '../modules/teams/index.ts';
+import { contextFor } from './access.ts';
+import { refuseUnwieldy } from './json-limits.ts';
 import { problems } from './problems.ts';
-import type { AnyRoute, RequestContext, RouteResult, SignedInContext, TeamContext } from './route.ts';
+import { limitRate } from './rate-limit.ts';
+import type { AnyRoute, RequestContext, RouteResult } from './route.ts';
 import { compileBodyCheck, compileTextCheck } from './validation.ts';
 
 const DEFAULT_BODY_LIMIT = '256kb';
@@ -20,94 +20,86 @@ export const assignRequestId: RequestHandler = (_request, response, next) => {
   next();
 };
 
-/** Builds the router of /api from the routes: body, access, validation, handler, answer, in this order. */
+/** Builds the router of /api from the routes. */
 export function mountRoutes(routes: readonly AnyRoute[], deps: Dependencies): Router {
   const router = Router();
   for (const definition of routes) {
-    const parseBody = express.json({ limit: definition.bodyLimit ?? DEFAULT_BODY_LIMIT, strict: false });
-    const steps: RequestHandler[] = definition.body ? [requireJson, parseBody] : [];
-    router[definition.method](definition.path, ...steps, handlerOf(definition, deps));
+    router[definition.method](definition.path, ...stepsOf(definition, deps));
   }
   return router;
+}
+
+/** What every request goes through, in this order. A stranger's body is not even read where one must be signed in. */
+function stepsOf(definition: AnyRoute, deps: Dependencies): RequestHandler[] {
+  const limits = definition.limits ?? [];
+  const limited = (withBody: boolean) =>
+    limits
+      .filter(({ also }) => (also !== undefined) === withBody)
+      .map((limit) => limitRate(deps.orm, limit, { factor: deps.config.rateLimitFactor }));
+  return [
+    ...limited(false),
+    openContext(definition, deps),
+    ...(definition.body ? [requireJson, parseBody(definition)] : []),
+    validateInput(definition),
+    ...limited(true),
+    answer(definition),
+  ];
+}
+
+/** What the steps of one request hand on. */
+interface Call {
+  context?: RequestContext;
+  input?: unknown;
+}
+
+function callOf(response: Response): Call {
+  return (response.locals['call'] ??= {}) as Call;
+}
+
+function openContext(definition: AnyRoute, deps: Dependencies): RequestHandler {
+  return async (request, response, next) => {
+    callOf(response).context = await contextFor(definition.access, deps, request, response);
+    next();
+  };
 }
 
 const requireJson: RequestHandler = (request, _response, next) => {
   next(request.is('application/json') ? undefined : problems.unsupportedMediaType());
 };
 
-function handlerOf(definition: AnyRoute, deps: Dependencies): RequestHandler {
+function parseBody({ bodyLimit }: AnyRoute): RequestHandler {
+  return express.json({ limit: bodyLimit ?? DEFAULT_BODY_LIMIT, strict: false });
+}
+
+function validateInput(definition: AnyRoute): RequestHandler {
   const checkParams = definition.params && compileTextCheck(definition.params);
   const checkQuery = definition.query && compileTextCheck(definition.query);
   const checkBody = definition.body && compileBodyCheck(definition.body);
-  const handle = definition.handler as (context: RequestContext, input: unknown) => Promise<RouteResult>;
 
-  return async (request, response) => {
-    const context = await contextFor(definition, deps, request, response);
+  return (request, response, next) => {
     const params: unknown = { ...request.params };
     const query: unknown = { ...request.query };
     const body: unknown = request.body;
-    refuseBadIds(definition, checkParams, params);
+    refuseBadIds(checkParams, params);
+    refuseUnwieldy(query);
     checkQuery?.(query);
+    refuseUnwieldy(body);
     checkBody?.(body);
     const ifMatch = definition.ifMatch ? revisionFromIfMatch(request) : 0;
-    send(definition, response, await handle(context, { params, query, body, ifMatch }));
+    callOf(response).input = { params, query, body, ifMatch };
+    next();
   };
 }
 
-/** An id that is no UUID names nothing: it is answered like an id that does not exist. */
-function refuseBadIds(
-  definition: AnyRoute,
-  check: ((value: unknown) => void) | undefined,
-  params: unknown,
-): void {
+/** An id that cannot be one names nothing: it is answered like an id that does not exist. */
+function refuseBadIds(check: ((value: unknown) => void) | undefined, params: unknown): void {
   try {
     check?.(params);
   } catch {
-    throw problems.notFound(definition.tag.toLowerCase(), 'in the address');
+    const [name = 'address', value = ''] = Object.entries(params as Record<string, string>).at(-1) ?? [];
+    const resource = name.replace(/(Id|Token)$/, '');
+    throw problems.notFound(resource, name.endsWith('Id') ? value : 'token');
   }
-}
-
-async function contextFor(
-  definition: AnyRoute,
-  deps: Dependencies,
-  request: Request,
-  response: Response,
-): Promise<RequestContext | SignedInContext | TeamContext> {
-  const sessionId = deps.sessions.readSessionCookie(request.headers.cookie ?? '');
-  const base: RequestContext = {
-    ...deps,
-    em: deps.orm.em.fork(),
-    requestId: String(response.locals['requestId']),
-    ip: request.ip ?? 'unknown',
-    sessionId,
-  };
-  if (definition.access.kind === 'public') return base;
-
-  const signedIn = { ...base, person: await personOf(deps, sessionId, response) };
-  if (definition.access.kind === 'signed in') return signedIn;
-
-  const teamId = String(request.params['teamId']);
-  const membership = await findMembership(base.em, { teamId, userId: signedIn.person.id });
-  if (membership === null) throw problems.notFound('team', teamId);
-  if (!hasPermission(membership.roles, definition.access.permission)) {
-    throw problems.forbidden(
-      `Your roles (${membership.roles.join(', ')}) do not include “${definition.access.permission}”.`,
-    );
-  }
-  return { ...signedIn, teamId, roles: membership.roles };
-}
-
-async function personOf(deps: Dependencies, sessionId: string | null, response: Response) {
-  if (sessionId === null) throw problems.unauthenticated();
-  const { session, user } = await deps.sessions.validateSession(sessionId);
-  if (session === null) {
-    response.appendHeader('Set-Cookie', deps.sessions.createBlankSessionCookie().serialize());
-    throw problems.unauthenticated();
-  }
-  if (session.fresh) {
-    response.appendHeader('Set-Cookie', deps.sessions.createSessionCookie(session.id).serialize());
-  }
-  return { id: user.id, email: user.email, name: user.name };
 }
 
 /** `If-Match: "7"` or `W/"7"`; anything else is refused, since it would not guard the edit. */
@@ -116,6 +108,14 @@ function revisionFromIfMatch(request: Request): number {
   const digits = header === undefined ? undefined : /^(?:W\/)?"(\d{1,9})"$/.exec(header)?.[1];
   if (digits === undefined) throw problems.preconditionRequired();
   return Number(digits);
+}
+
+function answer(definition: AnyRoute): RequestHandler {
+  const handle = definition.handler as (context: unknown, input: unknown) => Promise<RouteResult>;
+  return async (_request, response) => {
+    const { context, input } = callOf(response);
+    send(definition, response, await handle(context, input));
+  };
 }
 
 function send(definition: AnyRoute, response: Response, result: RouteResult): void {

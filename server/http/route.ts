@@ -38,6 +38,16 @@ export type ContextFor<A extends Access> = A extends { kind: 'team' }
     ? SignedInContext
     : RequestContext;
 
+/** So many calls in so long a time, counted for each address the calls come from. */
+export interface RouteLimit<Body> {
+  /** Keeps the counts of different limits apart. */
+  name: string;
+  hits: number;
+  windowSeconds: number;
+  /** What else tells callers apart, from the body; such a limit counts after validation. */
+  also?: (body: Body) => string;
+}
+
 type StaticOrNothing<S> = S extends TSchema ? Static<S> : undefined;
 
 export interface RouteInput<Params, Query, Body> {
@@ -73,6 +83,8 @@ export interface RouteDefinition<
   params?: Params;
   query?: Query;
   body?: Body;
+  /** Limits on how often it may be called. */
+  limits?: RouteLimit<StaticOrNothing<Body>>[];
   /** The request must name the revision it is based on. */
   ifMatch?: boolean;
   /** Largest body; 256 kB unless said otherwise. */
@@ -83,7 +95,8 @@ export interface RouteDefinition<
 }
 
 /** A route whose types are forgotten, as lists of routes hold it. */
-export type AnyRoute = Omit<RouteDefinition, 'handler'> & {
+export type AnyRoute = Omit<RouteDefinition, 'handler' | 'limits'> & {
+  limits?: RouteLimit<never>[];
   handler: (context: never, input: never) => Promise<RouteResult>;
 };
 
@@ -94,7 +107,7 @@ export function route<
   Query extends TObject | undefined = undefined,
   Body extends TSchema | undefined = undefined,
 >(definition: RouteDefinition<A, Params, Query, Body>): AnyRoute {
-  return definition as unknown as AnyRoute;
+  return definition;
 }
 
 export const PUBLIC = { kind: 'public' } as const;

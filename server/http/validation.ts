@@ -5,6 +5,7 @@ import addFormats from 'ajv-formats';
 
 import type { FieldError } from '#shared/contracts/problem.ts';
 
+import { escapePointer } from './json-limits.ts';
 import { problems } from './problems.ts';
 
 /** Errors listed in one answer: a body that is wrong everywhere does not need a thousand sentences. */
@@ -39,7 +40,7 @@ export function compileTextCheck(schema: TSchema): (value: unknown) => void {
 /** The same schema may be compiled by several routes, so its `$id` stays out of Ajv's registry. */
 function withoutId(schema: TSchema): TSchema {
   const { $id: _omitted, ...rest } = schema;
-  return rest as TSchema;
+  return rest;
 }
 
 function throwing(validate: ValidateFunction): (value: unknown) => void {
@@ -53,6 +54,7 @@ function throwing(validate: ValidateFunction): (value: unknown) => void {
 export function fieldErrors(errors: readonly ErrorObject[]): FieldError[] {
   const byPointer = new Map<string, FieldError>();
   for (const error of errors) {
+    if (byPointer.size >= MAX_ERRORS) break;
     if (error.keyword === 'anyOf' || error.keyword === 'oneOf') continue;
     const pointer = pointerOf(error);
     if (!byPointer.has(pointer)) {
@@ -67,15 +69,14 @@ export function fieldErrors(errors: readonly ErrorObject[]): FieldError[] {
       detail: `${fieldName(pointer)} has none of the allowed shapes.`,
     });
   }
-  return [...byPointer.values()].slice(0, MAX_ERRORS);
+  return [...byPointer.values()];
 }
 
 /** Ajv reports a missing or surplus member at its parent: the pointer names the member. */
 function pointerOf(error: ErrorObject): string {
   const parameters = error.params as { missingProperty?: string; additionalProperty?: string };
   const member = parameters.missingProperty ?? parameters.additionalProperty;
-  const escaped = member === undefined ? '' : `/${member.replaceAll('~', '~0').replaceAll('/', '~1')}`;
-  return `#${error.instancePath}${escaped}`;
+  return `#${error.instancePath}${member === undefined ? '' : `/${escapePointer(member)}`}`;
 }
 
 function fieldName(pointer: string): string {
@@ -85,7 +86,8 @@ function fieldName(pointer: string): string {
 }
 
 function shown(value: unknown): string {
-  const text = typeof value === 'string' ? `“${value}”` : (JSON.stringify(value) ?? 'nothing');
+  if (value === undefined) return 'nothing';
+  const text = typeof value === 'string' ? `“${value}”` : JSON.stringify(value);
   return text.length > 60 ? `${text.slice(0, 57)}…` : text;
 }
 

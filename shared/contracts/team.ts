@@ -65,7 +65,7 @@ export const MemberSchema = Type.Object(
     id: Uuid,
     revision: Revision,
     person: PersonRefSchema,
-    email: Type.String(),
+    email: nullable(Type.String({ description: 'null for roles that do not manage the team' })),
     roles: RolesSchema,
     joinedAt: Timestamp,
   },

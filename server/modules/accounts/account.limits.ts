@@ -1,27 +1,31 @@
-import type { RequestHandler } from 'express';
+import type { SignIn } from '#shared/contracts/account.ts';
 
-import type { Dependencies } from '../../dependencies.ts';
-import { limitRate } from '../../http/rate-limit.ts';
+import type { RouteLimit } from '../../http/route.ts';
+import { comparableEmail } from './account.queries.ts';
 
-/** Limits on the routes where guessing pays. They stand before the routes and count failed and successful calls. */
-export function apiRateLimits({ orm, config }: Dependencies): { path: string; handlers: RequestHandler[] }[] {
-  const factor = config.rateLimitFactor;
-  return [
-    {
-      path: '/api/auth/sign-in',
-      handlers: [limitRate(orm, { name: 'sign-in', hits: 30 * factor, windowSeconds: 900 })],
-    },
-    {
-      path: '/api/auth/sign-up',
-      handlers: [limitRate(orm, { name: 'sign-up', hits: 20 * factor, windowSeconds: 3600 })],
-    },
-    {
-      path: '/api/auth/password',
-      handlers: [limitRate(orm, { name: 'password', hits: 20 * factor, windowSeconds: 900 })],
-    },
-    {
-      path: '/api/invitations',
-      handlers: [limitRate(orm, { name: 'invitations', hits: 60 * factor, windowSeconds: 900 })],
-    },
-  ];
-}
+const MINUTES_15 = 900;
+const HOUR = 3600;
+
+/**
+ * Limits where guessing pays. They count failed and successful calls alike. There is none on an e-mail address alone:
+ * it would let a stranger lock a person out.
+ */
+export const SIGN_IN_LIMITS: RouteLimit<SignIn>[] = [
+  { name: 'sign-in', hits: 30, windowSeconds: MINUTES_15 },
+  {
+    name: 'sign-in-address',
+    hits: 10,
+    windowSeconds: MINUTES_15,
+    also: ({ email }) => comparableEmail(email),
+  },
+];
+
+export const SIGN_UP_LIMITS: RouteLimit<unknown>[] = [{ name: 'sign-up', hits: 20, windowSeconds: HOUR }];
+
+export const PASSWORD_LIMITS: RouteLimit<unknown>[] = [
+  { name: 'password', hits: 20, windowSeconds: MINUTES_15 },
+];
+
+export const INVITATION_LIMITS: RouteLimit<unknown>[] = [
+  { name: 'invitation', hits: 60, windowSeconds: MINUTES_15 },
+];

@@ -15,6 +15,8 @@ declare module 'lucia' {
 
 export type SessionManager = Lucia<Record<never, never>, { email: string; name: string }>;
 
+const SESSION_COOKIE = 'oxymel_session';
+
 /** Sessions last this long after their last use; the cookie is renewed halfway. */
 const SESSION_DAYS = 30;
 
@@ -23,15 +25,27 @@ export function createSessionManager(orm: MikroORM, options: { secureCookies: bo
   return new Lucia(sessionAdapter(orm), {
     sessionExpiresIn: new TimeSpan(SESSION_DAYS, 'd'),
     sessionCookie: {
-      name: 'oxymel_session',
+      name: SESSION_COOKIE,
       attributes: { sameSite: 'lax', secure: options.secureCookies, path: '/' },
     },
     getUserAttributes: (user) => ({ email: user.email, name: user.name }),
   });
 }
 
-/** What is stored is the hash of the cookie's value. */
-function hashOf(sessionId: string): string {
+/**
+ * The session's id in a Cookie header, or null. Other applications on the host may have set any cookie: only ours is
+ * looked at, and whatever is not an id is as good as none.
+ */
+export function sessionIdFromCookies(header: string | undefined): string | null {
+  for (const pair of (header ?? '').split(';')) {
+    const [name, value] = pair.split('=', 2);
+    if (name?.trim() === SESSION_COOKIE && /^[a-z0-9]{20,100}$/.test(value ?? '')) return value ?? null;
+  }
+  return null;
+}
+
+/** What is stored of a session's id, which is the cookie's value: its hash. */
+export function storedSessionId(sessionId: string): string {
   return createHash('sha256').update(sessionId).digest('hex');
 }
 
@@ -39,7 +53,7 @@ function sessionAdapter(orm: MikroORM): Adapter {
   const fork = () => orm.em.fork();
   return {
     async getSessionAndUser(sessionId): Promise<[DatabaseSession | null, DatabaseUser | null]> {
-      const row = await fork().findOne(Session, { id: hashOf(sessionId) }, { populate: ['user'] });
+      const row = await fork().findOne(Session, { id: storedSessionId(sessionId) }, { populate: ['user'] });
       if (row === null) return [null, null];
       const { id, email, name } = row.user;
       const session = { id: sessionId, userId: id, expiresAt: row.expiresAt, attributes: {} };
@@ -50,13 +64,13 @@ function sessionAdapter(orm: MikroORM): Adapter {
       return rows.map((row) => ({ id: row.id, userId, expiresAt: row.expiresAt, attributes: {} }));
     },
     async setSession({ id, userId, expiresAt }) {
-      await fork().insert(Session, { id: hashOf(id), user: userId, expiresAt });
+      await fork().insert(Session, { id: storedSessionId(id), user: userId, expiresAt });
     },
     async updateSessionExpiration(sessionId, expiresAt) {
-      await fork().nativeUpdate(Session, { id: hashOf(sessionId) }, { expiresAt });
+      await fork().nativeUpdate(Session, { id: storedSessionId(sessionId) }, { expiresAt });
     },
     async deleteSession(sessionId) {
-      await fork().nativeDelete(Session, { id: hashOf(sessionId) });
+      await fork().nativeDelete(Session, { id: storedSessionId(sessionId) });
     },
     async deleteUserSessions(userId) {
       await fork().nativeDelete(Session, { user: userId });

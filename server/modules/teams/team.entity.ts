@@ -1,6 +1,7 @@
 import { type InferEntity, defineEntity, p } from '@mikro-orm/core';
 
 import type { Role } from '#shared/contracts/roles.ts';
+import type { StandardDrinkPlace } from '#shared/physics/data/standard-drinks.ts';
 import type { HouseMeasures } from '#shared/units/house-measures.ts';
 
 import { User } from '../accounts/account.entity.ts';
@@ -12,7 +13,7 @@ export const Team = defineEntity({
     id: p.uuid().primary().defaultRaw('gen_random_uuid()'),
     revision: p.integer().version(),
     name: p.string().columnType('text'),
-    country: p.string().columnType('text'),
+    country: p.string().columnType('text').$type<StandardDrinkPlace>(),
     currency: p.string().columnType('text'),
     houseMeasures: p.json<HouseMeasures>(),
     createdAt: p.datetime().defaultRaw('now()'),

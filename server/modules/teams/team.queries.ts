@@ -1,6 +1,13 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 
-import { Membership } from './team.entity.ts';
+import type { Role } from '#shared/contracts/roles.ts';
+
+import { problems } from '../../http/problems.ts';
+import { Membership, Team } from './team.entity.ts';
+
+/** More people or teams than anybody has; lists of them are not paged. */
+const MAX_MEMBERS = 1000;
+const MAX_TEAMS_OF_PERSON = 200;
 
 /** The membership that lets a person act in a team, or null: the team then does not exist for them. */
 export function findMembership(
@@ -11,6 +18,54 @@ export function findMembership(
   return em.findOne(Membership, { team: input.teamId, user: input.userId });
 }
 
-function isUuid(text: string): boolean {
+export function isUuid(text: string): boolean {
   return /^[0-9a-f]{8}-(?:[0-9a-f]{4}-){3}[0-9a-f]{12}$/i.test(text);
+}
+
+export interface TeamOfPerson {
+  teamId: string;
+  teamName: string;
+  roles: readonly Role[];
+}
+
+/** The teams of a person, by name. */
+export async function findTeamsOf(em: EntityManager, userId: string): Promise<TeamOfPerson[]> {
+  const memberships = await em.find(
+    Membership,
+    { user: userId },
+    { populate: ['team'], orderBy: [{ team: { name: 'asc' } }, { id: 'asc' }], limit: MAX_TEAMS_OF_PERSON },
+  );
+  return memberships.map(({ team, roles }) => ({ teamId: team.id, teamName: team.name, roles }));
+}
+
+export async function loadTeam(em: EntityManager, teamId: string): Promise<Team> {
+  const team = await em.findOne(Team, { id: teamId });
+  if (team === null) throw problems.notFound('team', teamId);
+  return team;
+}
+
+/** The members in the order of their names. */
+export function findMembers(em: EntityManager, teamId: string): Promise<Membership[]> {
+  return em.find(
+    Membership,
+    { team: teamId },
+    { populate: ['user'], orderBy: [{ user: { name: 'asc' } }, { id: 'asc' }], limit: MAX_MEMBERS },
+  );
+}
+
+export async function loadMember(
+  em: EntityManager,
+  { teamId, memberId }: { teamId: string; memberId: string },
+): Promise<Membership> {
+  const member = await em.findOne(Membership, { id: memberId, team: teamId }, { populate: ['user'] });
+  if (member === null) throw problems.notFound('member', memberId);
+  return member;
+}
+
+/** How many managers there would be without this member. */
+export function countOtherManagers(
+  em: EntityManager,
+  { teamId, memberId }: { teamId: string; memberId: string },
+): Promise<number> {
+  return em.count(Membership, { team: teamId, id: { $ne: memberId }, roles: { $contains: ['manager'] } });
 }

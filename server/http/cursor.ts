@@ -1,0 +1,37 @@
+import { problems } from './problems.ts';
+
+/** A place in a sorted list: the sort value of the last row shown, and its id. */
+export interface Cursor {
+  value: string | number;
+  id: string;
+}
+
+/** Writes a cursor as text that a client hands back untouched. It names the sort, so that it fits no other. */
+export function encodeCursor({ sort, value, id }: Cursor & { sort: string }): string {
+  return Buffer.from(JSON.stringify([sort, value, id])).toString('base64url');
+}
+
+/** Reads a cursor of this very list and sort; anything else is refused at its field. */
+export function decodeCursor(text: string | undefined, sort: string): Cursor | null {
+  if (text === undefined) return null;
+  const [cursorSort, value, id] = parsed(text);
+  const isValue = typeof value === 'string' || (typeof value === 'number' && Number.isFinite(value));
+  if (cursorSort !== sort || !isValue || typeof id !== 'string' || !/^[0-9a-f-]{36}$/.test(id)) {
+    throw problems.invalidField('#/cursor', 'cursor', 'cursor is not one that this list and sort gave out.');
+  }
+  return { value, id };
+}
+
+function parsed(text: string): unknown[] {
+  try {
+    const value: unknown = JSON.parse(Buffer.from(text, 'base64url').toString('utf8'));
+    return Array.isArray(value) ? value : [];
+  } catch {
+    return [];
+  }
+}
+
+/** A search word as a LIKE pattern: what the person typed, anywhere, with the wildcards taken literally. */
+export function containsPattern(search: string): string {
+  return `%${search.trim().toLowerCase().replaceAll(/[\\%_]/g, '\\$&')}%`;
+}
