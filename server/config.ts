@@ -27,6 +27,9 @@ export interface Config {
   ownCluster: boolean;
 }
 
+export const DEFAULT_HOST = '127.0.0.1';
+export const DEFAULT_PORT = 3000;
+
 /** Thrown when a setting is wrong: one message per setting, all of them at once. */
 export class ConfigError extends Error {
   readonly messages: string[];
@@ -84,8 +87,8 @@ export function loadConfig(env: NodeJS.ProcessEnv): Config {
   const trustProxy = Number(settings.OXYMEL_TRUST_PROXY ?? 0);
   return {
     databaseUrl: settings.DATABASE_URL ?? privateDatabaseUrl(dataFolder),
-    host: settings.HOST ?? '127.0.0.1',
-    port: Number(settings.PORT ?? 3000),
+    host: settings.HOST ?? DEFAULT_HOST,
+    port: Number(settings.PORT ?? DEFAULT_PORT),
     publicOrigins: origins.map((origin) => new URL(origin).host),
     webRoot: resolve(PROJECT_ROOT, settings.OXYMEL_WEB_ROOT ?? 'dist/web'),
     secureCookies: isOn(settings.OXYMEL_SECURE_COOKIES, {

@@ -11,8 +11,8 @@ import { explainStartFailure } from './setup/start-failures.ts';
 
 /** Starts the server: settings, database, demo team, listening. Any failure is told in one message and ends it. */
 async function main(): Promise<void> {
+  const held = holdOwnCluster(process.env);
   const config = loadConfig(process.env);
-  const held = holdOwnCluster(config);
   const logger = pino({
     level: config.logLevel,
     redact: ['req.headers.cookie', 'req.headers.authorization', 'res.headers["set-cookie"]'],
