@@ -1,4 +1,6 @@
+import { isStorableText } from './json-limits.ts';
 import { problems } from './problems.ts';
+import { isUuid } from './uuid.ts';
 
 /** A place in a sorted list: the sort value of the last row shown, and its id. */
 export interface Cursor {
@@ -15,8 +17,9 @@ export function encodeCursor({ sort, value, id }: Cursor & { sort: string }): st
 export function decodeCursor(text: string | undefined, sort: string): Cursor | null {
   if (text === undefined) return null;
   const [cursorSort, value, id] = parsed(text);
-  const isValue = typeof value === 'string' || (typeof value === 'number' && Number.isFinite(value));
-  if (cursorSort !== sort || !isValue || typeof id !== 'string' || !/^[0-9a-f-]{36}$/.test(id)) {
+  const isText = typeof value === 'string' && isStorableText(value);
+  const isValue = isText || (typeof value === 'number' && Number.isFinite(value));
+  if (cursorSort !== sort || !isValue || typeof id !== 'string' || !isUuid(id)) {
     throw problems.invalidField('#/cursor', 'cursor', 'cursor is not one that this list and sort gave out.');
   }
   return { value, id };
@@ -33,5 +36,8 @@ function parsed(text: string): unknown[] {
 
 /** A search word as a LIKE pattern: what the person typed, anywhere, with the wildcards taken literally. */
 export function containsPattern(search: string): string {
-  return `%${search.trim().toLowerCase().replaceAll(/[\\%_]/g, '\\$&')}%`;
+  return `%${search
+    .trim()
+    .toLowerCase()
+    .replaceAll(/[\\%_]/g, '\\$&')}%`;
 }

@@ -6,6 +6,11 @@ export const JSON_LIMITS = { values: 20_000, depth: 40 } as const;
 /** NUL, which PostgreSQL cannot store, and halves of characters, which are no text at all. */
 const UNSTORABLE = /\0|\p{Surrogate}/u;
 
+/** Whether PostgreSQL can hold the text. */
+export function isStorableText(text: string): boolean {
+  return !UNSTORABLE.test(text);
+}
+
 interface Visit {
   value: unknown;
   pointer: string;
@@ -40,6 +45,6 @@ export function escapePointer(name: string): string {
 }
 
 function refuseUnstorable(text: string, pointer: string): void {
-  if (!UNSTORABLE.test(text)) return;
+  if (isStorableText(text)) return;
   throw problems.invalidField(pointer, 'text', 'There is a character here that is no text, such as NUL.');
 }

@@ -93,14 +93,20 @@ function responsesOf({ response }: AnyRoute, schemas: JsonObject): JsonObject {
 
 /** Puts a named schema among the components once and refers to it; an unnamed one stays in place. */
 function refTo(schema: TSchema, schemas: JsonObject): JsonObject {
-  if (schema.$id === undefined) return schema;
+  if (schema.$id === undefined) return withoutId(schema);
   schemas[schema.$id] = withoutId(schema);
   return { $ref: `#/components/schemas/${schema.$id}` };
 }
 
 /** A copy without any `$id`, also inside: in OpenAPI a component's name is its place. */
-function withoutId(schema: TSchema): unknown {
-  return JSON.parse(JSON.stringify(schema, (key, value: unknown) => (key === '$id' ? undefined : value)));
+function withoutId(schema: TSchema): JsonObject {
+  const text = JSON.stringify(schema, (key, value: unknown) => (key === '$id' ? undefined : value));
+  return JSON.parse(text) as JsonObject;
+}
+
+/** The document as docs/openapi.json holds it. */
+export function openApiText(routes: readonly AnyRoute[]): string {
+  return `${JSON.stringify(openApiDocument(routes), null, 2)}\n`;
 }
 
 export function openApiRoutes(routes: readonly AnyRoute[]): AnyRoute[] {

@@ -57,6 +57,8 @@ export class ProblemError extends Error {
   }
 }
 
+const SAVED_MEANWHILE = 'Somebody else saved this after you opened it. Nothing of yours was written.';
+
 export const problems = {
   malformedRequest: (detail: string) => new ProblemError('malformed-request', detail),
   unauthenticated: () => new ProblemError('unauthenticated', 'This needs a signed-in person.'),
@@ -70,14 +72,9 @@ export const problems = {
   inUse: (resource: string, detail: string) => new ProblemError('in-use', detail, { resource }),
   notAllowedInState: (detail: string) => new ProblemError('not-allowed-in-state', detail),
   staleVersion: (currentRevision: number, current: unknown) =>
-    new ProblemError(
-      'stale-version',
-      'Somebody else saved this after you opened it. Nothing of yours was written.',
-      {
-        currentRevision,
-        current,
-      },
-    ),
+    new ProblemError('stale-version', SAVED_MEANWHILE, { currentRevision, current }),
+  /** Stale too, found out by the database; the caller has to read again. */
+  savedMeanwhile: () => new ProblemError('stale-version', SAVED_MEANWHILE),
   preconditionRequired: () =>
     new ProblemError('precondition-required', 'Send If-Match with the revision this edit is based on.'),
   invalidFields: (errors: FieldError[]) =>
@@ -90,8 +87,8 @@ export const problems = {
     }),
   payloadTooLarge: (limit: string) =>
     new ProblemError('payload-too-large', `The body is larger than ${limit}.`),
-  unsupportedMediaType: () =>
-    new ProblemError('unsupported-media-type', 'The body must be application/json.'),
+  unsupportedMediaType: (detail = 'The body must be application/json.') =>
+    new ProblemError('unsupported-media-type', detail),
   unavailable: () => new ProblemError('unavailable', 'The database does not answer. Try again in a moment.'),
   internal: () => new ProblemError('internal', 'The fault was logged under the instance named here.'),
 };

@@ -4,8 +4,8 @@ import { PAGE_LIMIT, type Page } from '#shared/contracts/common.ts';
 import type { HistoryQuery } from '#shared/contracts/team.ts';
 
 import { problems } from '../../http/problems.ts';
+import { isUuid } from '../../http/uuid.ts';
 import { AuditEvent } from './team.entity.ts';
-import { isUuid } from './team.queries.ts';
 
 const DAY_MS = 86_400_000;
 

@@ -3,6 +3,7 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Role } from '#shared/contracts/roles.ts';
 
 import { problems } from '../../http/problems.ts';
+import { isUuid } from '../../http/uuid.ts';
 import { Membership, Team } from './team.entity.ts';
 
 /** More people or teams than anybody has; lists of them are not paged. */
@@ -16,10 +17,6 @@ export function findMembership(
 ): Promise<Membership | null> {
   if (!isUuid(input.teamId)) return Promise.resolve(null);
   return em.findOne(Membership, { team: input.teamId, user: input.userId });
-}
-
-export function isUuid(text: string): boolean {
-  return /^[0-9a-f]{8}-(?:[0-9a-f]{4}-){3}[0-9a-f]{12}$/i.test(text);
 }
 
 export interface TeamOfPerson {
