@@ -4,6 +4,7 @@ import { resolve } from 'node:path';
 import { type Static, Type } from '@sinclair/typebox';
 import { Ajv } from 'ajv';
 
+import { DEFAULT_HOST, DEFAULT_PORT } from './setup/held-cluster.mjs';
 import { databaseFile, dataFolderFrom, PROJECT_ROOT } from './setup/paths.mjs';
 
 /** What the server runs with. Made from the environment once, at start. */
@@ -26,9 +27,6 @@ export interface Config {
   /** Whether the database is the private one, which stops with the server. */
   ownCluster: boolean;
 }
-
-export const DEFAULT_HOST = '127.0.0.1';
-export const DEFAULT_PORT = 3000;
 
 /** Thrown when a setting is wrong: one message per setting, all of them at once. */
 export class ConfigError extends Error {

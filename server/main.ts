@@ -6,12 +6,12 @@ import { createOrm, migrate } from './db/orm.ts';
 import { DEMO_SIGN_INS, isEmpty, seedDemo } from './db/seed.ts';
 import { createSessionManager } from './modules/accounts/index.ts';
 import { listen, stopOnSignals } from './serving.ts';
-import { holdOwnCluster } from './setup/held-cluster.ts';
+import { holdOwnCluster, leaveSignalsToServer } from './setup/held-cluster.mjs';
 import { explainStartFailure } from './setup/start-failures.ts';
 
 /** Starts the server: settings, database, demo team, listening. Any failure is told in one message and ends it. */
 async function main(): Promise<void> {
-  const held = holdOwnCluster(process.env);
+  holdOwnCluster(process.env);
   const config = loadConfig(process.env);
   const logger = pino({
     level: config.logLevel,
@@ -28,7 +28,7 @@ async function main(): Promise<void> {
   const app = createApp({ config, orm, logger, sessions, now: () => new Date() });
   const server = await listen(app, config);
   stopOnSignals({ server, orm, config });
-  held.serving();
+  leaveSignalsToServer();
 
   console.log(`\nOxymel answers at http://${config.host}:${config.port}\n`);
   if (config.seedDemo) printSignIns();
