@@ -1,4 +1,4 @@
-import { type Static, Type } from '@sinclair/typebox';
+import { type Static, type TInteger, type TOptional, Type } from '@sinclair/typebox';
 
 import { ACID_KEYS, type AcidKey, COMPOSITION_RANGES } from '../physics/composition.ts';
 import {
@@ -256,9 +256,15 @@ const CsvText = Type.String({
   maxLength: CSV_IMPORT_LIMITS.maxCharacters,
   description: 'the CSV file as text',
 });
-const CsvMapping = Type.Record(oneOf(INGREDIENT_CSV_COLUMNS), Type.Integer({ minimum: 0, maximum: 200 }), {
-  description: 'column of the file (from 0) for each of our columns',
-});
+const CsvMapping = Type.Object(
+  Object.fromEntries(
+    INGREDIENT_CSV_COLUMNS.map((column) => [
+      column,
+      Type.Optional(Type.Integer({ minimum: 0, maximum: 200 })),
+    ]),
+  ) as Record<IngredientCsvColumn, TOptional<TInteger>>,
+  { additionalProperties: false, description: 'column of the file (from 0) for each of our columns' },
+);
 
 export const IngredientImportRequestSchema = Type.Object(
   { csv: CsvText, mapping: Type.Optional(CsvMapping) },
