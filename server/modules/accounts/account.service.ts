@@ -27,7 +27,7 @@ export async function signUp({ em, now }: RequestContext, input: SignUp): Promis
       if (invitationToken !== undefined) {
         await joinByInvitation(transaction, { token: invitationToken, now: now(), person: user });
       } else if (teamName !== undefined) {
-        await createTeam(transaction, { name: teamName, creator: user });
+        createTeam(transaction, { name: teamName, creator: user });
       }
     });
   } catch (error) {

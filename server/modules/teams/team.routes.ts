@@ -31,7 +31,7 @@ export const teamOnlyRoutes: AnyRoute[] = [
     body: TeamCreateSchema,
     response: { status: 201, schema: TeamSchema },
     handler: async ({ em, person }, { body }) => {
-      const team = await createTeam(em, { name: body.name, creator: person });
+      const team = createTeam(em, { name: body.name, creator: person });
       await em.flush();
       return { body: toTeam(team), revision: team.revision };
     },

@@ -7,16 +7,18 @@ import { DEFAULT_HOUSE_MEASURES } from '#shared/units/house-measures.ts';
 
 import { flushBased, refuseStale } from '../../http/revision.ts';
 import type { SignedInPerson, TeamContext } from '../../http/route.ts';
+import { stockGlasses } from '../glasses/index.ts';
+import { stockTeam } from '../ingredients/index.ts';
 import { recordEvent } from './history.service.ts';
 import { Membership, Team } from './team.entity.ts';
 import { toTeam } from './team.mapper.ts';
 import { loadTeam } from './team.queries.ts';
 
-/** Adds a team with its creator as manager; the caller flushes. */
+/** Adds a team with its creator as manager, the generic back bar and the common glasses; the caller flushes. */
 export function createTeam(
   em: EntityManager,
   { name, creator }: { name: string; creator: Pick<SignedInPerson, 'id' | 'name'> },
-): Promise<Team> {
+): Team {
   const team = em.create(Team, {
     id: randomUUID(),
     name: name.trim(),
@@ -25,6 +27,8 @@ export function createTeam(
     houseMeasures: { ...DEFAULT_HOUSE_MEASURES },
   });
   em.create(Membership, { team, user: creator.id, roles: ['manager'] });
+  stockTeam(em, team.id);
+  stockGlasses(em, team.id);
   recordEvent(em, {
     teamId: team.id,
     person: creator,
@@ -33,7 +37,7 @@ export function createTeam(
     subjectId: team.id,
     summary: `Made the team ${team.name}`,
   });
-  return Promise.resolve(team);
+  return team;
 }
 
 export async function changeTeam(
