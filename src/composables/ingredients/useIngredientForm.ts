@@ -56,8 +56,9 @@ export function useIngredientForm(teamId: string): IngredientForm {
       submission.refuse(read.errors);
       return null;
     }
-    let saved: Ingredient | null = null;
-    await submission.submit(async () => (saved = await sendOrKeepTheirs(read.body)));
+    const answers: (Ingredient | null)[] = [];
+    await submission.submit(async () => answers.push(await sendOrKeepTheirs(read.body)));
+    const saved = answers[0] ?? null;
     if (saved !== null) open(saved);
     return saved;
   }

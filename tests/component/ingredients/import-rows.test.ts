@@ -1,5 +1,5 @@
-import { mount } from '@vue/test-utils';
-import { describe, expect, it } from 'vitest';
+import { enableAutoUnmount, mount } from '@vue/test-utils';
+import { afterEach, describe, expect, it } from 'vitest';
 
 import type { IngredientImportPreview } from '#shared/contracts/ingredient.ts';
 import ImportMapping from '#src/components/ingredients/ImportMapping.vue';
@@ -7,9 +7,13 @@ import ImportRows from '#src/components/ingredients/ImportRows.vue';
 import { checkedRows, fileErrors } from '#src/composables/ingredients/import-words.ts';
 import { allByRole, byRole, textOf } from '#tests/support/by-role.ts';
 
+enableAutoUnmount(afterEach);
+
+const page = document.body;
+
 const preview: IngredientImportPreview = {
   headings: ['Bottle', 'Strength', 'Shelf'],
-  mapping: { name: 0, abv_percent: 1 } as IngredientImportPreview['mapping'],
+  mapping: { name: 0, abv_percent: 1 },
   rows: [
     { row: 2, action: 'create', name: 'Quince liqueur', ingredient: null },
     { row: 3, action: 'refuse', name: 'Plum brandy', ingredient: null },
@@ -23,21 +27,24 @@ const preview: IngredientImportPreview = {
   counts: { create: 1, update: 0, unchanged: 1, refuse: 1 },
 };
 
-describe('the preview of an import', () => {
-  const rows = () => {
-    const wrapper = mount(ImportRows, { props: { rows: checkedRows(preview) } });
-    return allByRole(wrapper.element, 'row').slice(1).map(textOf);
-  };
+function shownRows(): string[] {
+  mount(ImportRows, { props: { rows: checkedRows(preview) }, attachTo: page });
+  return allByRole(page, 'row').slice(1).map(textOf);
+}
 
+describe('the preview of an import', () => {
   it('puts the refused rows first, with an error for each field', () => {
-    const [first] = rows();
-    expect(first).toContain('refused Plum brandy');
+    const [first] = shownRows();
+    expect(first).toMatch(/^Plum brandy .* refused/);
     expect(first).toContain('abv_percent “150” must be from 0 to 100');
     expect(first).toContain('category “schnaps” is not a category');
   });
 
   it('says in words what happens to every other row', () => {
-    expect(rows().slice(1)).toEqual(['2 + new Quince liqueur nothing', '4 = same Dry gin nothing']);
+    expect(shownRows().slice(1)).toEqual([
+      'Quince liqueur Line 2 Action + new What is wrong nothing',
+      'Dry gin Line 4 Action = same What is wrong nothing',
+    ]);
   });
 
   it('keeps errors that belong to no row', () => {
@@ -46,18 +53,19 @@ describe('the preview of an import', () => {
 });
 
 describe('the mapping of columns', () => {
+  function mountMapping() {
+    const { headings, mapping } = preview;
+    return mount(ImportMapping, { props: { headings, mapping, disabled: false }, attachTo: page });
+  }
+
   it('shows which column of the file feeds ours, and which columns are not read', () => {
-    const wrapper = mount(ImportMapping, {
-      props: { headings: preview.headings, mapping: preview.mapping, disabled: false },
-    });
-    expect(byRole<HTMLSelectElement>(wrapper.element, 'combobox', /^abv \[%\]/).value).toBe('1');
-    expect(wrapper.text()).toContain('Not read: Shelf.');
+    mountMapping();
+    expect(byRole<HTMLSelectElement>(page, 'combobox', /^abv \[%\]/).value).toBe('1');
+    expect(textOf(page)).toContain('Not read: Shelf.');
   });
 
   it('asks for a new preview with the column chosen, or without it', async () => {
-    const wrapper = mount(ImportMapping, {
-      props: { headings: preview.headings, mapping: preview.mapping, disabled: false },
-    });
+    const wrapper = mountMapping();
     await wrapper.find('select').setValue('2');
     expect(wrapper.emitted('change')?.[0]).toEqual([{ name: 2, abv_percent: 1 }]);
     await wrapper.find('select').setValue('');

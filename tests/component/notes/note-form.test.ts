@@ -1,16 +1,16 @@
-import { mount } from '@vue/test-utils';
-import { describe, expect, it } from 'vitest';
+import { enableAutoUnmount, mount } from '@vue/test-utils';
+import { afterEach, describe, expect, it } from 'vitest';
 
 import type { NoteWrite } from '#shared/contracts/version.ts';
 import NoteForm from '#src/components/notes/NoteForm.vue';
 import { allByRole, byRole, textOf, typeInto } from '#tests/support/by-role.ts';
 
+enableAutoUnmount(afterEach);
+
+const page = document.body;
+
 function mountForm(note: NoteWrite | null = null) {
-  const wrapper = mount(NoteForm, {
-    props: { note, saving: false, problemText: null },
-    attachTo: document.body,
-  });
-  return { wrapper, root: wrapper.element.parentElement as HTMLElement };
+  return mount(NoteForm, { props: { note, saving: false, failure: null }, attachTo: page });
 }
 
 const written: NoteWrite = {
@@ -20,18 +20,17 @@ const written: NoteWrite = {
 
 describe('the form for a tasting note', () => {
   it('leaves every scale unscored until somebody scores it', () => {
-    const { wrapper, root } = mountForm();
-    expect(allByRole(root, 'slider').map((slider) => slider.getAttribute('aria-valuetext'))).toEqual(
+    mountForm();
+    expect(allByRole(page, 'slider').map((slider) => slider.getAttribute('aria-valuetext'))).toEqual(
       Array<string>(6).fill('not scored'),
     );
-    wrapper.unmount();
   });
 
   it('saves the scores that were given and null for the rest', async () => {
-    const { wrapper, root } = mountForm();
-    typeInto(byRole(root, 'slider', 'Sour'), '0');
-    typeInto(byRole(root, 'slider', 'Overall'), '7');
-    typeInto(byRole(root, 'textbox', 'In words'), '  bright, a little thin ');
+    const wrapper = mountForm();
+    typeInto(byRole(page, 'slider', 'Sour'), '0');
+    typeInto(byRole(page, 'slider', 'Overall'), '7');
+    typeInto(byRole(page, 'textbox', 'In words'), '  bright, a little thin ');
     await wrapper.find('form').trigger('submit');
     expect(wrapper.emitted('save')).toEqual([
       [
@@ -41,29 +40,25 @@ describe('the form for a tasting note', () => {
         },
       ],
     ]);
-    wrapper.unmount();
   });
 
   it('takes a score back', async () => {
-    const { wrapper, root } = mountForm(written);
-    byRole(root, 'button', 'Leave Sweet out').click();
+    const wrapper = mountForm(written);
+    byRole(page, 'button', 'Leave Sweet out').click();
     await wrapper.find('form').trigger('submit');
     expect(wrapper.emitted<[NoteWrite]>('save')?.[0]?.[0].scores).toMatchObject({ sweet: null, overall: 8 });
-    wrapper.unmount();
   });
 
   it('refuses a note that says nothing, and says why', async () => {
-    const { wrapper, root } = mountForm();
+    const wrapper = mountForm();
     await wrapper.find('form').trigger('submit');
     expect(wrapper.emitted('save')).toBeUndefined();
-    expect(textOf(byRole(root, 'alert'))).toContain('Give at least one score');
-    wrapper.unmount();
+    expect(textOf(byRole(page, 'alert'))).toContain('Give at least one score');
   });
 
   it('opens an existing note with its contents', () => {
-    const { wrapper, root } = mountForm(written);
-    expect(byRole<HTMLTextAreaElement>(root, 'textbox', 'In words').value).toBe('short finish');
-    expect(byRole(root, 'slider', 'Overall').getAttribute('aria-valuetext')).toBe('8 of 10');
-    wrapper.unmount();
+    mountForm(written);
+    expect(byRole<HTMLTextAreaElement>(page, 'textbox', 'In words').value).toBe('short finish');
+    expect(byRole(page, 'slider', 'Overall').getAttribute('aria-valuetext')).toBe('8 of 10');
   });
 });

@@ -1,13 +1,16 @@
-import { mount } from '@vue/test-utils';
-import { describe, expect, it } from 'vitest';
+import { enableAutoUnmount, mount } from '@vue/test-utils';
+import { afterEach, describe, expect, it } from 'vitest';
 
 import type { Figures } from '#shared/contracts/version.ts';
 import AllergenStatement from '#src/components/versions/AllergenStatement.vue';
 import { textOf } from '#tests/support/by-role.ts';
 
+enableAutoUnmount(afterEach);
+
 function statement(allergens: Partial<Figures['allergens']>): string {
   const whole = { contains: [], mayContain: [], notReviewed: [], ...allergens };
-  return textOf(mount(AllergenStatement, { props: { allergens: whole } }).element);
+  mount(AllergenStatement, { props: { allergens: whole }, attachTo: document.body });
+  return textOf(document.body);
 }
 
 describe('the allergen statement', () => {
@@ -31,8 +34,7 @@ describe('the allergen statement', () => {
   it('gives the United States list its own line, without the European groups it lacks', () => {
     const words = statement({ contains: ['sulphites', 'milk'] });
     expect(words).toContain('Contains milk, sulphites');
-    expect(words).toContain('US major allergens milk');
-    expect(words).not.toContain('US major allergens milk, sulphites');
+    expect(words).toMatch(/US major allergens milk$/);
   });
 
   it('says that the United States list means wheat where the European means cereals with gluten', () => {

@@ -1,0 +1,47 @@
+import { type Ref, ref, shallowRef } from 'vue';
+
+import type { Version, VersionStateChange } from '#shared/contracts/version.ts';
+import { changeVersionState, lockVersion, unlockVersion } from '#src/api/versions.ts';
+
+export interface VersionActions {
+  isBusy: Ref<boolean>;
+  failure: Ref<unknown>;
+  clearFailure: () => void;
+  changeState: (change: VersionStateChange) => Promise<boolean>;
+  lock: () => Promise<boolean>;
+  unlock: (reason: string) => Promise<boolean>;
+}
+
+/** Moves a version between its states. Each action is based on the version as it is shown. */
+export function useVersionActions(
+  teamId: string,
+  version: Ref<Version | null>,
+  onChanged: (version: Version) => void,
+): VersionActions {
+  const isBusy = ref(false);
+  const failure = shallowRef<unknown>(null);
+
+  async function act(task: (based: Version) => Promise<Version>): Promise<boolean> {
+    if (version.value === null || isBusy.value) return false;
+    isBusy.value = true;
+    failure.value = null;
+    try {
+      onChanged(await task(version.value));
+      return true;
+    } catch (error) {
+      failure.value = error;
+      return false;
+    } finally {
+      isBusy.value = false;
+    }
+  }
+
+  return {
+    isBusy,
+    failure,
+    clearFailure: () => (failure.value = null),
+    changeState: (change) => act((based) => changeVersionState(teamId, based, change)),
+    lock: () => act((based) => lockVersion(teamId, based)),
+    unlock: (reason) => act((based) => unlockVersion(teamId, based, reason)),
+  };
+}
