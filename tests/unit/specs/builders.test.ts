@@ -26,7 +26,7 @@ import {
 } from '#tests/support/builders.ts';
 
 const ajv = new Ajv2020({ strict: true, allErrors: true, allowUnionTypes: true });
-addFormats.default(ajv);
+addFormats(ajv);
 
 function errorsOf(schema: TSchema, value: unknown) {
   const { $id: _omitted, ...rest } = schema;
