@@ -1,11 +1,11 @@
-import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
 
 import { type Static, Type } from '@sinclair/typebox';
 import { Ajv } from 'ajv';
 
-import { DEFAULT_HOST, DEFAULT_PORT } from './setup/held-cluster.mjs';
-import { databaseFile, dataFolderFrom, PROJECT_ROOT } from './setup/paths.mjs';
+import { DEFAULT_HOST, DEFAULT_PORT } from './setup/held-database.mjs';
+import { dataFolderFrom, PROJECT_ROOT } from './setup/paths.mjs';
+import { readDatabaseFile } from './setup/private-database.mjs';
 
 /** What the server runs with. Made from the environment once, at start. */
 export interface Config {
@@ -126,32 +126,11 @@ function isOn(value: string | undefined, { otherwise }: { otherwise: boolean }):
   return value === undefined ? otherwise : value === 'on';
 }
 
-/** The address that `npm start` wrote when it made the private database. */
+/** The address that was written when the private database started. */
 function privateDatabaseUrl(dataFolder: string): string {
-  const file = databaseFile(dataFolder);
-  let text: string;
-  try {
-    text = readFileSync(file, 'utf8');
-  } catch (error) {
-    const code = (error as NodeJS.ErrnoException).code;
-    if (code === 'ENOENT') {
-      throw new ConfigError([
-        'There is no database yet. Start with "npm start", which makes one, or set DATABASE_URL.',
-      ]);
-    }
-    throw new ConfigError([`${file} cannot be read (${code ?? 'unknown'}). Start as the user who owns it.`]);
-  }
-  const url = urlIn(text);
-  if (url !== undefined) return url;
-  throw new ConfigError([`${file} is damaged. Delete it and run "npm start", which writes it again.`]);
-}
-
-function urlIn(text: string): string | undefined {
-  try {
-    const content: unknown = JSON.parse(text);
-    if (typeof content !== 'object' || content === null || !('databaseUrl' in content)) return undefined;
-    return typeof content.databaseUrl === 'string' ? content.databaseUrl : undefined;
-  } catch {
-    return undefined;
-  }
+  const { databaseUrl } = readDatabaseFile(dataFolder);
+  if (databaseUrl !== undefined) return databaseUrl;
+  throw new ConfigError([
+    'There is no database yet. Start with "npm start", which makes one, or set DATABASE_URL.',
+  ]);
 }

@@ -6,12 +6,12 @@ import { createOrm, migrate } from './db/orm.ts';
 import { DEMO_SIGN_INS, isEmpty, seedDemo } from './db/seed.ts';
 import { createSessionManager } from './modules/accounts/index.ts';
 import { listen, stopOnSignals } from './serving.ts';
-import { holdOwnCluster, leaveSignalsToServer } from './setup/held-cluster.mjs';
+import { holdPrivateDatabase, leaveSignalsToServer } from './setup/held-database.mjs';
 import { explainStartFailure } from './setup/start-failures.ts';
 
 /** Starts the server: settings, database, demo team, listening. Any failure is told in one message and ends it. */
 async function main(): Promise<void> {
-  holdOwnCluster(process.env);
+  await holdPrivateDatabase(process.env);
   const config = loadConfig(process.env);
   const logger = pino({
     level: config.logLevel,

@@ -5,7 +5,7 @@ import type { MikroORM } from '@mikro-orm/postgresql';
 import type { Express } from 'express';
 
 import type { Config } from './config.ts';
-import { stopCluster } from './setup/cluster.mjs';
+import { stopPrivateDatabase } from './setup/private-database.mjs';
 
 /** Listens, or fails with the operating system's own error. */
 export function listen(app: Express, config: Pick<Config, 'host' | 'port'>): Promise<Server> {
@@ -45,5 +45,5 @@ async function stopAll({
   server.closeAllConnections();
   await closed;
   await orm.close(true);
-  if (config.ownCluster) stopCluster(config.dataFolder);
+  if (config.ownCluster) stopPrivateDatabase(config.dataFolder);
 }

@@ -1,28 +1,28 @@
 import { claim, describeHolder } from './claims.mjs';
-import { stopCluster } from './cluster.mjs';
 import { checkNodeVersion, ensureNodePackages } from './node-packages.mjs';
 import { dataFolderFrom, PROJECT_ROOT, runningFile } from './paths.mjs';
-import { ensurePrivateDatabase } from './private-database.mjs';
+import { makePrivateDatabase } from './private-database.mjs';
 import { endRunningCommands } from './run-command.mjs';
-import { adviceFor, SetupError } from './setup-error.mjs';
+import { explainSetupFailure, SetupError } from './setup-error.mjs';
 import { sayAbout } from './steps.mjs';
 import { ensurePostgres } from './system-packages.mjs';
 import { ensureWebBuild } from './web-build.mjs';
 
 /*
  * What `npm start` and `npm run dev` do before the server: only with what Node.js brings, because nothing else may be
- * installed yet. The database comes last, so that little can go wrong once it runs.
+ * installed yet. The database is made here and started by the process that also stops it.
  */
 
 const INTERRUPTED_EXIT_CODE = 130;
 const dataFolder = dataFolderFrom(process.env);
-let databaseStartedHere = false;
 
 /** @param {string} mode `start`, or `dev`, which needs no built client */
 async function prepare(mode) {
   checkNodeVersion(PROJECT_ROOT);
   const ownDatabase = !process.env['DATABASE_URL'];
-  const claimed = ownDatabase ? claim(runningFile(dataFolder), { doing: `npm ${mode}` }) : undefined;
+  const claimed = ownDatabase
+    ? claim(runningFile(dataFolder), { doing: mode === 'dev' ? 'npm run dev' : 'npm start' })
+    : undefined;
   if (claimed?.ok === false) throw new SetupError(describeHolder(claimed.holder));
   process.once('exit', () => claimed?.release());
 
@@ -34,27 +34,18 @@ async function prepare(mode) {
     say('the one in DATABASE_URL');
     return;
   }
-  ({ startedHere: databaseStartedHere } = await ensurePrivateDatabase({ dataFolder, env: process.env, say }));
+  await makePrivateDatabase({ dataFolder, env: process.env, say });
 }
 
 /** @param {number} code */
 function giveUp(code) {
   endRunningCommands();
-  if (databaseStartedHere) stopCluster(dataFolder);
   process.exit(code);
-}
-
-/** @param {unknown} error */
-function explain(error) {
-  if (error instanceof SetupError) return error.message;
-  const { code = '', message, path } = /** @type {NodeJS.ErrnoException} */ (error);
-  const where = path === undefined ? '' : `${path}: `;
-  return `${where}${adviceFor(code) ?? message}`;
 }
 
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => giveUp(INTERRUPTED_EXIT_CODE));
 
 prepare(process.argv[2] ?? 'start').catch((error) => {
-  console.error(`\nOxymel did not start: ${explain(error)}`);
+  console.error(`\nOxymel did not start: ${explainSetupFailure(error)}`);
   giveUp(1);
 });

@@ -4,7 +4,6 @@ import { setTimeout as wait } from 'node:timers/promises';
 
 import { ownerOf } from './cluster-folder.mjs';
 import { readRecord, urlOf, writeRecord } from './cluster-record.mjs';
-import { databaseFile } from './paths.mjs';
 import { portOrAnother } from './ports.mjs';
 import { postgresAnswers } from './postgres-answer.mjs';
 import { postgresFor } from './postgres-programs.mjs';
@@ -61,16 +60,8 @@ export async function startCluster({ folder, env = process.env, settings = [] })
 }
 
 /**
- * Stops the private cluster of a data folder, if it runs. Returns when it has ended.
+ * Stops the cluster in a folder, if it runs. Returns when it has ended.
  *
- * @param {string} dataFolder
- */
-export function stopCluster(dataFolder) {
-  const folder = clusterFolderIn(dataFolder);
-  if (folder !== undefined) stopClusterIn(folder);
-}
-
-/**
  * @param {string} folder
  * @param {{ env?: NodeJS.ProcessEnv }} [options]
  */
@@ -151,17 +142,4 @@ function majorOf(folder) {
 function trimLog(folder) {
   const log = join(folder, 'server.log');
   if ((statSync(log, { throwIfNoEntry: false })?.size ?? 0) > LOG_LIMIT_BYTES) renameSync(log, `${log}.old`);
-}
-
-/**
- * @param {string} dataFolder
- * @returns {string | undefined}
- */
-function clusterFolderIn(dataFolder) {
-  try {
-    const { clusterFolder } = JSON.parse(readFileSync(databaseFile(dataFolder), 'utf8'));
-    return typeof clusterFolder === 'string' ? clusterFolder : undefined;
-  } catch {
-    return undefined;
-  }
 }

@@ -1,11 +1,11 @@
 import { spawn } from 'node:child_process';
-import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 
-import { claim, describeHolder } from './claims.mjs';
-import { stopCluster } from './cluster.mjs';
-import { databaseFile, dataFolderFrom, PROJECT_ROOT, runningFile } from './paths.mjs';
+import { holdPrivateDatabase, leaveSignalsToServer } from './held-database.mjs';
+import { dataFolderFrom, PROJECT_ROOT } from './paths.mjs';
 import { freePort, portOrAnother } from './ports.mjs';
+import { readDatabaseFile } from './private-database.mjs';
+import { explainSetupFailure, SetupError } from './setup-error.mjs';
 import { sayAbout } from './steps.mjs';
 
 /*
@@ -15,7 +15,6 @@ import { sayAbout } from './steps.mjs';
 
 const WEB_PORT = 5173;
 const HOST = '127.0.0.1';
-const dataFolder = dataFolderFrom(process.env);
 const ownDatabase = !process.env['DATABASE_URL'];
 
 /** @type {import('node:child_process').ChildProcess[]} */
@@ -27,34 +26,21 @@ async function main() {
   const wished = Number(process.env['PORT']) || WEB_PORT;
   const webPort = await portOrAnother(wished);
   if (process.env['PORT'] && webPort !== wished)
-    throw new Error(`another program uses port ${wished} already`);
+    throw new SetupError(`Another program uses port ${wished} already.`);
   const address = `http://${HOST}:${webPort}`;
-  if (ownDatabase) hold(address);
+  await holdPrivateDatabase(process.env, { doing: 'npm run dev', address });
+  leaveSignalsToServer();
 
   const env = { ...process.env, OXYMEL_API: `http://${HOST}:${apiPort}` };
   startNode(['tsx/dist/cli.mjs', 'watch', '--clear-screen=false', 'server/main.ts'], {
     ...env,
-    DATABASE_URL: process.env['DATABASE_URL'] || privateDatabaseUrl(),
+    DATABASE_URL: process.env['DATABASE_URL'] || readDatabaseFile(dataFolderFrom(process.env)).databaseUrl,
     OXYMEL_DEMO: process.env['OXYMEL_DEMO'] || (ownDatabase ? 'on' : 'off'),
     HOST,
     PORT: String(apiPort),
   });
   startNode(['vite/bin/vite.js', '--host', HOST, '--port', String(webPort), '--clearScreen', 'false'], env);
   sayAbout('dev')(`the client with hot reload: ${address} (its API at port ${apiPort})`);
-}
-
-/** @param {string} address */
-function hold(address) {
-  const claimed = claim(runningFile(dataFolder), { doing: 'npm run dev', address });
-  if (!claimed.ok) throw new Error(describeHolder(claimed.holder));
-  process.once('exit', () => {
-    stopCluster(dataFolder);
-    claimed.release();
-  });
-}
-
-function privateDatabaseUrl() {
-  return String(JSON.parse(readFileSync(databaseFile(dataFolder), 'utf8')).databaseUrl);
 }
 
 /**
@@ -95,6 +81,6 @@ async function stop(code) {
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => void stop(0));
 
 main().catch((error) => {
-  console.error(`\nOxymel did not start: ${error.message}`);
+  console.error(`\nOxymel did not start: ${explainSetupFailure(error)}`);
   void stop(1);
 });

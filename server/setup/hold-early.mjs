@@ -1,9 +1,10 @@
-import { holdOwnCluster } from './held-cluster.mjs';
+import { holdPrivateDatabase } from './held-database.mjs';
+import { explainSetupFailure } from './setup-error.mjs';
 
-/* Loaded by `npm start` before the server's own modules, which take a second or two: Ctrl-C in that time stops the database too. */
+/* Loaded by `npm start` before the server's own modules, so that Ctrl-C stops the database from the first moment. */
 try {
-  holdOwnCluster(process.env);
+  await holdPrivateDatabase(process.env);
 } catch (error) {
-  console.error(`\nOxymel did not start: ${error instanceof Error ? error.message : String(error)}`);
+  console.error(`\nOxymel did not start: ${explainSetupFailure(error)}`);
   process.exit(1);
 }

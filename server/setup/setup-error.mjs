@@ -61,3 +61,17 @@ export function describeFailure({ doing, output }) {
   const lines = output.trim().split('\n').slice(-SHOWN_LINES);
   return `${doing} failed. It said:\n${lines.map((line) => `    ${line}`).join('\n')}`;
 }
+
+/**
+ * The message for whatever ended the set-up.
+ *
+ * @param {unknown} error
+ */
+export function explainSetupFailure(error) {
+  if (error instanceof SetupError) return error.message;
+  if (!(error instanceof Error)) return String(error);
+  const { code = '', path, message } = /** @type {NodeJS.ErrnoException} */ (error);
+  const advice = adviceFor(code);
+  if (advice === undefined) return message;
+  return path === undefined ? advice : `${path}: ${advice}`;
+}

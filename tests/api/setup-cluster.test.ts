@@ -16,11 +16,16 @@ import { afterAll, describe, expect, it } from 'vitest';
 import { createOrm } from '#server/db/orm.ts';
 import { createCluster } from '#server/setup/cluster-create.mjs';
 import { postgresAccount } from '#server/setup/cluster-folder.mjs';
-import { isCluster, startCluster, stopCluster, stopClusterIn } from '#server/setup/cluster.mjs';
+import { isCluster, startCluster, stopClusterIn } from '#server/setup/cluster.mjs';
 import { databaseFile } from '#server/setup/paths.mjs';
 import { findPostgres } from '#server/setup/postgres-programs.mjs';
 import { runningPostmaster } from '#server/setup/postmaster.mjs';
-import { ensurePrivateDatabase } from '#server/setup/private-database.mjs';
+import {
+  makePrivateDatabase,
+  readDatabaseFile,
+  startPrivateDatabase,
+  stopPrivateDatabase,
+} from '#server/setup/private-database.mjs';
 
 const folders: string[] = [];
 
@@ -36,11 +41,14 @@ function aDataFolder(): string {
   return folder;
 }
 
-const ensure = (dataFolder: string) =>
-  ensurePrivateDatabase({ dataFolder, env: process.env, say: () => undefined });
+/** As `npm start` does it: made when it is not there, then started. */
+async function ensure(dataFolder: string): Promise<{ startedHere: boolean }> {
+  const wanted = { dataFolder, env: process.env, say: () => undefined };
+  await makePrivateDatabase(wanted);
+  return startPrivateDatabase(wanted);
+}
 
-const urlIn = (dataFolder: string): string =>
-  (JSON.parse(readFileSync(databaseFile(dataFolder), 'utf8')) as { databaseUrl: string }).databaseUrl;
+const urlIn = (dataFolder: string): string => readDatabaseFile(dataFolder).databaseUrl ?? '';
 
 async function ask<Row>(databaseUrl: string, sql: string): Promise<Row[]> {
   const orm = await createOrm({ databaseUrl, poolMax: 1 });
@@ -53,7 +61,7 @@ async function ask<Row>(databaseUrl: string, sql: string): Promise<Row[]> {
 
 afterAll(() => {
   for (const folder of folders) {
-    stopCluster(folder);
+    stopPrivateDatabase(folder);
     rmSync(dirname(folder), { recursive: true, force: true });
   }
 });
@@ -86,7 +94,7 @@ describe('the private database', () => {
     const dataFolder = aDataFolder();
     await ensure(dataFolder);
     const first = urlIn(dataFolder);
-    stopCluster(dataFolder);
+    stopPrivateDatabase(dataFolder);
     expect(runningPostmaster(join(dataFolder, 'postgres'))).toBeUndefined();
 
     await ensure(dataFolder);
@@ -99,7 +107,7 @@ describe('the private database', () => {
     await ensure(dataFolder);
     const lock = join(dataFolder, 'postgres', 'postmaster.pid');
     const text = readFileSync(lock, 'utf8');
-    stopCluster(dataFolder);
+    stopPrivateDatabase(dataFolder);
     writeFileSync(lock, text.replace(/^\d+/, String(process.ppid)));
 
     expect(await ensure(dataFolder)).toEqual({ startedHere: true });

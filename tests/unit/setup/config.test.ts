@@ -114,9 +114,9 @@ describe('the private database in the settings', () => {
     ]);
   });
 
-  it('is called damaged when its file is no JSON', () => {
+  it('is asked for when its file is damaged', () => {
     const folder = temporaryFolder();
     writeFileSync(join(folder, 'database.json'), '{"databaseUrl":');
-    expect(messagesOf({ OXYMEL_DATA_DIR: folder })).toEqual([expect.stringContaining('is damaged')]);
+    expect(messagesOf({ OXYMEL_DATA_DIR: folder })).toEqual([expect.stringContaining('npm start')]);
   });
 });
