@@ -32,6 +32,9 @@ export interface TeamContext extends SignedInContext {
   roles: readonly Role[];
 }
 
+/** What a use case needs to know: who acts, in which team, with which roles, and when. */
+export type ActingContext = Pick<TeamContext, 'em' | 'teamId' | 'person' | 'roles' | 'now'>;
+
 export type ContextFor<A extends Access> = A extends { kind: 'team' }
   ? TeamContext
   : A extends { kind: 'signed in' }

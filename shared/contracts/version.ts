@@ -181,15 +181,21 @@ export const VersionCreateSchema = Type.Object(
 );
 export type VersionCreate = Static<typeof VersionCreateSchema>;
 
-/** Draft to on trial and back, or to retired. Locking has a request of its own. */
+const Reason = Type.Optional(longText({ maxLength: 500, description: 'why' }));
+
+/** Draft to on trial and back. Locking and retiring have requests of their own. */
 export const VersionStateChangeSchema = Type.Object(
-  {
-    state: oneOf(['draft', 'on trial', 'retired']),
-    reason: Type.Optional(longText({ maxLength: 500, description: 'why' })),
-  },
+  { state: oneOf(['draft', 'on trial']), reason: Reason },
   { $id: 'VersionStateChange', additionalProperties: false },
 );
 export type VersionStateChange = Static<typeof VersionStateChangeSchema>;
+
+/** Takes a version out of use, for good: it stays readable, and may become the base of a new one. */
+export const VersionRetireSchema = Type.Object(
+  { reason: Reason },
+  { $id: 'VersionRetire', additionalProperties: false },
+);
+export type VersionRetire = Static<typeof VersionRetireSchema>;
 
 export const LockRequestSchema = Type.Object(
   { confirmed: Type.Literal(true, { description: 'the signer has seen what is being signed' }) },

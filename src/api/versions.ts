@@ -4,6 +4,7 @@ import type {
   NoteWrite,
   Version,
   VersionList,
+  VersionRetire,
   VersionStateChange,
 } from '#shared/contracts/version.ts';
 import { request } from './http.ts';
@@ -35,6 +36,16 @@ export function getVersion(teamId: string, versionId: string): Promise<Version> 
 
 export function changeVersionState(teamId: string, based: Based, body: VersionStateChange): Promise<Version> {
   const path = `${versionPath(teamId, based.id)}/state`;
+  return request({ method: 'POST', path, body, ifMatch: based.revision });
+}
+
+export function retireVersion(teamId: string, based: Based, body: VersionRetire): Promise<Version> {
+  const path = `${versionPath(teamId, based.id)}/retire`;
+  return request({ method: 'POST', path, body, ifMatch: based.revision });
+}
+
+export function retireVersion(teamId: string, based: Based, body: VersionRetire): Promise<Version> {
+  const path = `${versionPath(teamId, based.id)}/retire`;
   return request({ method: 'POST', path, body, ifMatch: based.revision });
 }
 

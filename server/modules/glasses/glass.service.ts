@@ -10,7 +10,7 @@ import { formatVolume } from '#shared/text/format-quantity.ts';
 
 import { problems } from '../../http/problems.ts';
 import { flushBased, refuseStale } from '../../http/revision.ts';
-import type { TeamContext } from '../../http/route.ts';
+import type { ActingContext } from '../../http/route.ts';
 import { recordEvent } from '../teams/index.ts';
 import { Glass } from './glass.entity.ts';
 import { toGlass } from './glass.mapper.ts';
@@ -20,7 +20,7 @@ import { loadGlass } from './glass.queries.ts';
 const BRIM_RANGE_ML = { min: 5, max: 20_000 } as const;
 
 export async function addGlass(
-  { em, teamId, person }: TeamContext,
+  { em, teamId, person }: ActingContext,
   write: GlassWrite,
 ): Promise<GlassResource> {
   const glass = em.create(Glass, { id: randomUUID(), team: teamId, ...columnsOf(write) });
@@ -30,7 +30,7 @@ export async function addGlass(
 }
 
 export async function changeGlass(
-  { em, teamId, person }: TeamContext,
+  { em, teamId, person }: ActingContext,
   { glassId, write, ifMatch }: { glassId: string; write: GlassWrite; ifMatch: number },
 ): Promise<GlassResource> {
   const glass = await loadGlass(em, { teamId, glassId });
@@ -42,7 +42,7 @@ export async function changeGlass(
 }
 
 export async function setGlassRetired(
-  { em, teamId, person, now }: TeamContext,
+  { em, teamId, person, now }: ActingContext,
   { glassId, retired, ifMatch }: { glassId: string; retired: boolean; ifMatch: number },
 ): Promise<GlassResource> {
   const glass = await loadGlass(em, { teamId, glassId });
@@ -102,7 +102,7 @@ function brimOf(profile: GlassWrite['profile']): number {
 
 function recordGlassEvent(
   em: EntityManager,
-  event: Pick<TeamContext, 'teamId' | 'person'> & { glass: Glass; action: string; words: string },
+  event: Pick<ActingContext, 'teamId' | 'person'> & { glass: Glass; action: string; words: string },
 ): void {
   const { teamId, person, glass, action, words } = event;
   const summary = `${words} ${glass.name}, ${formatVolume({ volumeMl: glass.brimMl, unit: 'ml' })} to the brim`;

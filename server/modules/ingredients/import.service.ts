@@ -14,7 +14,7 @@ import type { FieldError } from '#shared/contracts/problem.ts';
 import { canonicalJson } from '../../db/canonical-json.ts';
 import { ProblemError, problems } from '../../http/problems.ts';
 import { compileBodyCheck } from '../../http/validation.ts';
-import type { TeamContext } from '../../http/route.ts';
+import type { ActingContext } from '../../http/route.ts';
 import { recordEvent } from '../teams/index.ts';
 import { csvRow, readCsvRow } from './csv-columns.ts';
 import { type CsvMapping, type CsvRecord, mappingOf, readCsv, writeCsv } from './csv-file.ts';
@@ -29,13 +29,13 @@ type ImportError = IngredientImportPreview['errors'][number];
 const checkWrite = compileBodyCheck(IngredientWriteSchema);
 
 /** The back bar in use as CSV. */
-export async function exportIngredients({ em, teamId }: TeamContext): Promise<string> {
+export async function exportIngredients({ em, teamId }: ActingContext): Promise<string> {
   return writeCsv((await findBackBar(em, teamId)).map(toIngredientWrite));
 }
 
 /** What an import would do, row by row. Nothing is written. */
 export async function previewImport(
-  { em, teamId }: TeamContext,
+  { em, teamId }: ActingContext,
   request: IngredientImportRequest,
 ): Promise<IngredientImportPreview> {
   return planImport(await findBackBar(em, teamId), request).preview;
@@ -43,7 +43,7 @@ export async function previewImport(
 
 /** Does what the preview showed, in one transaction: rows without errors are written, the others are not. */
 export async function applyImport(
-  { em, teamId, person }: TeamContext,
+  { em, teamId, person }: ActingContext,
   request: IngredientImportRequest,
 ): Promise<IngredientImportResult> {
   const { preview, existing } = planImport(await findBackBar(em, teamId), request);

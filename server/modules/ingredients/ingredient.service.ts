@@ -9,7 +9,7 @@ import { fitOfComposition } from '#shared/physics/contents.ts';
 
 import { problems } from '../../http/problems.ts';
 import { flushBased, refuseStale } from '../../http/revision.ts';
-import type { TeamContext } from '../../http/route.ts';
+import type { ActingContext } from '../../http/route.ts';
 import { recordEvent } from '../teams/index.ts';
 import { describeIngredientChange } from './ingredient.changes.ts';
 import { Ingredient } from './ingredient.entity.ts';
@@ -17,7 +17,7 @@ import { columnsOf, toIngredient, toIngredientWrite } from './ingredient.mapper.
 import { findNamesake, loadIngredient } from './ingredient.queries.ts';
 
 export async function addIngredient(
-  context: TeamContext,
+  context: ActingContext,
   write: IngredientWrite,
 ): Promise<IngredientResource> {
   const { em, teamId, roles } = context;
@@ -34,7 +34,7 @@ export async function addIngredient(
 }
 
 export async function changeIngredient(
-  context: TeamContext,
+  context: ActingContext,
   { ingredientId, write, ifMatch }: { ingredientId: string; write: IngredientWrite; ifMatch: number },
 ): Promise<IngredientResource> {
   const { em, teamId, roles } = context;
@@ -52,7 +52,7 @@ export async function changeIngredient(
 }
 
 export async function setIngredientRetired(
-  context: TeamContext,
+  context: ActingContext,
   { ingredientId, retired, ifMatch }: { ingredientId: string; retired: boolean; ifMatch: number },
 ): Promise<IngredientResource> {
   const { em, teamId, roles, now } = context;
@@ -67,7 +67,7 @@ export async function setIngredientRetired(
   return toIngredient(ingredient, roles);
 }
 
-function flushIngredient({ em, teamId, roles }: TeamContext, ingredientId: string): Promise<void> {
+function flushIngredient({ em, teamId, roles }: ActingContext, ingredientId: string): Promise<void> {
   return flushBased(em, async (fresh) =>
     toIngredient(await loadIngredient(fresh, { teamId, ingredientId }), roles),
   );
@@ -116,7 +116,7 @@ async function refuseNamesake(
 }
 
 function recordIngredientEvent(
-  { em, teamId, person }: TeamContext,
+  { em, teamId, person }: ActingContext,
   { ingredient, action, summary }: { ingredient: Ingredient; action: string; summary: string },
 ): void {
   recordEvent(em, { teamId, person, action, subjectType: 'ingredient', subjectId: ingredient.id, summary });

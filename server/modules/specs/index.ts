@@ -1,1 +1,5 @@
-export { specRoutes } from './spec.routes.ts';
+export { specRoutes } from './routes.ts';
+export { createSpec, putDraft, branchSpec } from './spec.service.ts';
+export { saveVersion } from './version.service.ts';
+export { changeState, lockVersion } from './version-state.service.ts';
+export { addNote } from './note.service.ts';

@@ -7,5 +7,5 @@ export { recordEvent } from './history.service.ts';
 export { findOpenInvitation } from './invitation.queries.ts';
 export { acceptInvitation, joinByInvitation } from './invitation.service.ts';
 export { toInvitationPreview } from './team.mapper.ts';
-export { type TeamOfPerson, findMembership, findTeamsOf } from './team.queries.ts';
+export { type TeamOfPerson, findMembership, findTeamsOf, loadTeam } from './team.queries.ts';
 export { createTeam } from './team.service.ts';
