@@ -44,11 +44,6 @@ export function retireVersion(teamId: string, based: Based, body: VersionRetire)
   return request({ method: 'POST', path, body, ifMatch: based.revision });
 }
 
-export function retireVersion(teamId: string, based: Based, body: VersionRetire): Promise<Version> {
-  const path = `${versionPath(teamId, based.id)}/retire`;
-  return request({ method: 'POST', path, body, ifMatch: based.revision });
-}
-
 export function lockVersion(teamId: string, based: Based): Promise<Version> {
   const path = `${versionPath(teamId, based.id)}/lock`;
   return request({ method: 'POST', path, body: { confirmed: true }, ifMatch: based.revision });

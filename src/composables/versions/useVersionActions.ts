@@ -1,13 +1,15 @@
 import { type Ref, ref, shallowRef } from 'vue';
 
 import type { Version, VersionStateChange } from '#shared/contracts/version.ts';
-import { changeVersionState, lockVersion, unlockVersion } from '#src/api/versions.ts';
+import { changeVersionState, lockVersion, retireVersion, unlockVersion } from '#src/api/versions.ts';
 
 export interface VersionActions {
   isBusy: Ref<boolean>;
   failure: Ref<unknown>;
   clearFailure: () => void;
-  changeState: (change: VersionStateChange) => Promise<boolean>;
+  changeState: (state: VersionStateChange['state']) => Promise<boolean>;
+  /** The reason may stay empty. */
+  retire: (reason: string) => Promise<boolean>;
   lock: () => Promise<boolean>;
   unlock: (reason: string) => Promise<boolean>;
 }
@@ -40,7 +42,8 @@ export function useVersionActions(
     isBusy,
     failure,
     clearFailure: () => (failure.value = null),
-    changeState: (change) => act((based) => changeVersionState(teamId, based, change)),
+    changeState: (state) => act((based) => changeVersionState(teamId, based, { state })),
+    retire: (reason) => act((based) => retireVersion(teamId, based, reason === '' ? {} : { reason })),
     lock: () => act((based) => lockVersion(teamId, based)),
     unlock: (reason) => act((based) => unlockVersion(teamId, based, reason)),
   };
