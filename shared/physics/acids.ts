@@ -71,12 +71,23 @@ export const NO_ACIDS: Readonly<Record<AcidKey, number>> = {
   ascorbic: 0,
 };
 
-/** Adds up something of every acid; plain loop, since it runs for every line of every keystroke. */
-function sumOverAcids(amounts: AcidAmounts, weight: (acid: Acid) => number): number {
+/** What is added up for every acid, in the order of ACID_KEYS. */
+function weights(of: (acid: Acid) => number): readonly number[] {
+  return ACID_KEYS.map((key) => of(ACIDS[key]));
+}
+
+const CITRIC_FACTORS = weights((each) => each.citricFactor);
+const ONES = weights(() => 1);
+const APPARENT_VOLUMES = weights((each) => each.apparentVolumeMlPerG);
+const MOLES = weights((each) => 1 / each.molarMassGPerMol);
+
+/** A plain loop, since it runs several times for every line of every keystroke; liquids without acid cost nothing. */
+function weightedSum(amounts: AcidAmounts, factors: readonly number[]): number {
+  if (amounts === NO_ACIDS) return 0;
   let sum = 0;
-  for (const key of ACID_KEYS) {
-    const amount = amounts[key];
-    if (amount !== undefined && amount !== 0) sum += amount * weight(ACIDS[key]);
+  for (let index = 0; index < ACID_KEYS.length; index += 1) {
+    const amount = amounts[ACID_KEYS[index]!];
+    if (amount !== undefined) sum += amount * factors[index]!;
   }
   return sum;
 }
@@ -94,7 +105,7 @@ function sumOverAcids(amounts: AcidAmounts, weight: (acid: Acid) => number): num
  * @example   acidAsCitric({ citric: 45, malic: 4 }) // 48.82
  */
 export function acidAsCitric(amounts: AcidAmounts): number {
-  return sumOverAcids(amounts, (species) => species.citricFactor);
+  return weightedSum(amounts, CITRIC_FACTORS);
 }
 
 /**
@@ -110,7 +121,7 @@ export function acidAsCitric(amounts: AcidAmounts): number {
  * @example   totalAcid({ citric: 40, malic: 20 }) // 60
  */
 export function totalAcid(amounts: AcidAmounts): number {
-  return sumOverAcids(amounts, () => 1);
+  return weightedSum(amounts, ONES);
 }
 
 /**
@@ -126,7 +137,7 @@ export function totalAcid(amounts: AcidAmounts): number {
  * @example   apparentVolumeOfAcidsMl({ citric: 10 }) // 5.97
  */
 export function apparentVolumeOfAcidsMl(acidsG: AcidAmounts): number {
-  return sumOverAcids(acidsG, (species) => species.apparentVolumeMlPerG);
+  return weightedSum(acidsG, APPARENT_VOLUMES);
 }
 
 /**
@@ -142,5 +153,5 @@ export function apparentVolumeOfAcidsMl(acidsG: AcidAmounts): number {
  * @example   molesOfAcids({ citric: 192.12, acetic: 60.05 }) // 2
  */
 export function molesOfAcids(acidsG: AcidAmounts): number {
-  return sumOverAcids(acidsG, (species) => 1 / species.molarMassGPerMol);
+  return weightedSum(acidsG, MOLES);
 }

@@ -45,7 +45,7 @@ export function apparentBrixFromSpecificGravity(specificGravity: number): number
  * @param refractiveIndex   refractive index at 589.3 nm and 20 C [1]
  * @returns                 apparent degrees Brix [g/100 g]
  * Range:     1.33299 <= refractiveIndex <= 1.504
- * Accuracy:  0.02 °Brix against the OIV table, 0.07 °Brix against the CRC table as printed
+ * Accuracy:  0.03 °Brix against the OIV table, 0.07 °Brix against the CRC table as printed
  * Limits:    sugar and water only: 40 % vol of ethanol without any sugar reads as 15 °Brix
  * Source:    fit to the ICUMSA table, read at liquisearch.com/brix/tables
  * @example   apparentBrixFromRefractiveIndex(1.36384) // 20.0

@@ -8,7 +8,7 @@
  * given, and mixing it with itself changes nothing. All at 20 C. Sources: ternary, acid-volumes, rest-volume
  * (docs/sources/ternary.md, docs/sources/acids.md).
  */
-import { apparentVolumeOfAcidsMl, totalAcid } from './acids.ts';
+import { NO_ACIDS, apparentVolumeOfAcidsMl, totalAcid } from './acids.ts';
 import { ACID_KEYS, type AcidKey, COMPOSITION_RANGES, type Composition } from './composition.ts';
 import { DomainError, requireWithin } from './domain-error.ts';
 import { ETHANOL_DENSITY_G_PER_ML } from './ethanol-water.ts';
@@ -35,7 +35,8 @@ export const REST_VOLUME_ML_PER_G = 0.62;
 export const RESIDUAL_WARNING = 0.03;
 
 const ML_PER_L = 1000;
-const REST_TOLERANCE_G = 1e-14;
+/** Last Newton step of the rest in 1 mL [g]; what is left is of the order of its square. */
+const REST_STEP_TOLERANCE_G = 1e-8;
 
 /** The parts of one millilitre that follow from the composition alone. */
 interface Stated {
@@ -47,36 +48,40 @@ interface Stated {
   readonly acidMl: number;
 }
 
-function acidsPerMl(composition: Composition): Record<AcidKey, number> {
-  const acidsG = {} as Record<AcidKey, number>;
+function acidsPerMl(composition: Composition): Readonly<Record<AcidKey, number>> {
+  const { min, max } = COMPOSITION_RANGES.acidGPerL;
+  let acidsG: Record<AcidKey, number> | null = null;
   for (const key of ACID_KEYS) {
-    const value = composition.acidsGPerL[key] ?? 0;
-    acidsG[key] = requireWithin({ quantity: key, value, ...COMPOSITION_RANGES.acidGPerL }) / ML_PER_L;
+    const value = composition.acidsGPerL[key];
+    if (value === undefined || value === 0) continue;
+    acidsG ??= { ...NO_ACIDS };
+    acidsG[key] = requireWithin({ quantity: key, value, min, max }) / ML_PER_L;
   }
-  return acidsG;
+  return acidsG ?? NO_ACIDS;
 }
 
 function statedPerMl(composition: Composition): Stated {
+  const { abvFraction: abv, sugarGPerL: sugar } = COMPOSITION_RANGES;
   const ethanolMl = requireWithin({
     quantity: 'abvFraction',
     value: composition.abvFraction,
-    ...COMPOSITION_RANGES.abvFraction,
+    min: abv.min,
+    max: abv.max,
   });
-  const sugarG =
-    requireWithin({
-      quantity: 'sugarGPerL',
-      value: composition.sugarGPerL,
-      ...COMPOSITION_RANGES.sugarGPerL,
-    }) / ML_PER_L;
+  const sugarGPerL = requireWithin({
+    quantity: 'sugarGPerL',
+    value: composition.sugarGPerL,
+    min: sugar.min,
+    max: sugar.max,
+  });
   const acidsG = acidsPerMl(composition);
-  const acidMl = apparentVolumeOfAcidsMl(acidsG);
   return {
     ethanolG: ethanolMl * ETHANOL_DENSITY_G_PER_ML,
     ethanolMl,
-    sugarG,
+    sugarG: sugarGPerL / ML_PER_L,
     acidsG,
     acidG: totalAcid(acidsG),
-    acidMl,
+    acidMl: apparentVolumeOfAcidsMl(acidsG),
   };
 }
 
@@ -115,21 +120,32 @@ function remainingWaterG(input: { massG: number; stated: Stated; restG: number }
   return Math.max(0, water);
 }
 
+/** Density with some rest less the density that was given. */
+function excessDensity(restG: number, given: { stated: Stated; densityGPerMl: number }): ValueAndSlope {
+  const { stated, densityGPerMl } = given;
+  const liquid = ternaryMass(1 - stated.acidMl - REST_VOLUME_ML_PER_G * restG, stated);
+  return {
+    value: liquid.value + stated.acidG + restG - densityGPerMl,
+    slope: 1 - REST_VOLUME_ML_PER_G * liquid.slope,
+  };
+}
+
 /** The rest that makes a liquid as heavy as it was found to be. More rest is always more mass: it displaces 0.62 mL of liquid. */
 function restThatClosesG(densityGPerMl: number, stated: Stated): number {
-  const at = (restG: number): ValueAndSlope => {
-    const liquid = ternaryMass(1 - stated.acidMl - REST_VOLUME_ML_PER_G * restG, stated);
-    return {
-      value: liquid.value + stated.acidG + restG - densityGPerMl,
-      slope: 1 - REST_VOLUME_ML_PER_G * liquid.slope,
-    };
-  };
+  const given = { stated, densityGPerMl };
   const high = (1 - stated.acidMl - leastRoomMl(stated)) / REST_VOLUME_ML_PER_G;
-  const nothing = at(0);
+  const nothing = excessDensity(0, given);
   const start = -nothing.value / nothing.slope;
-  const root = solveIncreasing({ evaluate: at, low: 0, high, start, tolerance: REST_TOLERANCE_G });
+  const root = solveIncreasing({
+    evaluate: excessDensity,
+    given,
+    low: 0,
+    high,
+    start,
+    tolerance: REST_STEP_TOLERANCE_G,
+  });
   if (root.ok) return root.x;
-  const max = densityGPerMl + at(high).value;
+  const max = densityGPerMl + excessDensity(high, given).value;
   throw new DomainError({ quantity: 'densityGPerMl', value: densityGPerMl, min: 0, max });
 }
 
@@ -176,7 +192,7 @@ export function contentsPerMl(composition: Composition): Contents {
  * Accuracy:  0.1 % for liquids of ethanol, sugar, acid and water; wine and juice are heavier by what is not stated
  * Limits:    as tabarieDensityGPerMl
  * Source:    OIV-MA-AS2-03B; apparent volumes in docs/sources/acids.md
- * @example   computedDensityGPerMl({ abvFraction: 0, sugarGPerL: 614.8, acidsGPerL: {}, densityGPerMl: null }) // 1.2297
+ * @example   computedDensityGPerMl({ abvFraction: 0, sugarGPerL: 614.8, acidsGPerL: {}, densityGPerMl: null }) // 1.2296
  */
 export function computedDensityGPerMl(composition: Composition): number {
   return explainedDensity(statedPerMl(composition));

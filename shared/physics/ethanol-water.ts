@@ -6,14 +6,15 @@
  */
 import { R22_A, R22_B, R22_C } from './data/oiml-r22.ts';
 import { DomainError, requireWithin } from './domain-error.ts';
-import { solveIncreasing } from './solve-increasing.ts';
+import { solveIncreasing, type ValueAndSlope } from './solve-increasing.ts';
 
 /** Temperatures for which the formula was fitted, above the freezing line [C]. */
 export const R22_TEMPERATURE_RANGE_C = { min: -20, max: 40 } as const;
 
 const G_PER_ML = 1 / 1000;
 const REFERENCE_C = 20;
-const MASS_FRACTION_TOLERANCE = 1e-13;
+/** Last Newton step of an inverse; what is left is of the order of its square. */
+const MASS_FRACTION_TOLERANCE = 1e-8;
 
 /** a_0 + a_1 x + a_2 x^2 + … */
 function polynomial(coefficients: readonly number[], x: number): number {
@@ -155,7 +156,7 @@ function massFractionAt20(q: number): number {
     const excess = p * density - q * ETHANOL_DENSITY_G_PER_ML;
     const step = excess / (density + p * densitySlopeAt20(p));
     p -= step;
-    if (Math.abs(step) <= MASS_FRACTION_TOLERANCE) return p;
+    if (Math.abs(step) <= MASS_FRACTION_TOLERANCE) return Math.min(1, Math.max(0, p));
   }
   throw new DomainError({ quantity: 'ethanolVolumeFraction', value: q, min: 0, max: 1 });
 }
@@ -203,6 +204,20 @@ export function densityFromVolumeFraction(ethanolVolumeFraction: number): number
   return ethanolWaterDensityAt20(massFractionFromVolumeFraction(ethanolVolumeFraction));
 }
 
+/** A density less that of a mixture: it rises as the mixture gets stronger and lighter. */
+function densityExcess(p: number, density: number): ValueAndSlope {
+  return { value: density - densityAt20(p), slope: -densitySlopeAt20(p) };
+}
+
+const ROUNDING_G_PER_ML = 1e-12;
+
+/** The value, moved to a limit that it misses by rounding alone. */
+function withinRounding(input: { quantity: string; value: number; min: number; max: number }): number {
+  const { min, max } = input;
+  requireWithin({ ...input, min: min - ROUNDING_G_PER_ML, max: max + ROUNDING_G_PER_ML });
+  return Math.min(max, Math.max(min, input.value));
+}
+
 /**
  * Ethanol mass fraction of a mixture of known density at 20 C.
  *
@@ -217,12 +232,10 @@ export function densityFromVolumeFraction(ethanolVolumeFraction: number): number
  */
 export function massFractionFromDensity(densityGPerMl: number): number {
   const bounds = { min: ETHANOL_DENSITY_G_PER_ML, max: WATER_DENSITY_G_PER_ML };
-  const density = requireWithin({ quantity: 'densityGPerMl', value: densityGPerMl, ...bounds });
+  const density = withinRounding({ quantity: 'densityGPerMl', value: densityGPerMl, ...bounds });
   const root = solveIncreasing({
-    evaluate: (p) => ({
-      value: density - densityAt20(p),
-      slope: -densitySlopeAt20(p),
-    }),
+    evaluate: densityExcess,
+    given: density,
     low: 0,
     high: 1,
     start: (bounds.max - density) / (bounds.max - bounds.min),

@@ -6,7 +6,7 @@
  * docs/sources/ternary.md.
  */
 import { NO_ACIDS, apparentVolumeOfAcidsMl, totalAcid } from './acids.ts';
-import { ACID_KEYS } from './composition.ts';
+import { ACID_KEYS, type AcidKey } from './composition.ts';
 import { type Contents, REST_VOLUME_ML_PER_G } from './contents.ts';
 import { requireNotNegative } from './domain-error.ts';
 import { WATER_DENSITY_G_PER_ML } from './ethanol-water.ts';
@@ -35,18 +35,21 @@ export interface Portion {
  * @example   mixContents([{ contentsPerMl: WATER_CONTENTS_PER_ML, volumeMl: 50 }]).waterG // 49.91
  */
 export function mixContents(portions: readonly Portion[]): Contents {
-  const sum = { ethanolG: 0, waterG: 0, sugarG: 0, restG: 0, residualMl: 0 };
-  const acidsG = { ...NO_ACIDS };
+  const mixed = { ethanolG: 0, waterG: 0, sugarG: 0, acidsG: NO_ACIDS, restG: 0, residualMl: 0 };
+  let acidsG: Record<AcidKey, number> | null = null;
   for (const { contentsPerMl: part, volumeMl } of portions) {
     requireNotNegative({ quantity: 'volumeMl', value: volumeMl });
-    sum.ethanolG += part.ethanolG * volumeMl;
-    sum.waterG += part.waterG * volumeMl;
-    sum.sugarG += part.sugarG * volumeMl;
-    sum.restG += part.restG * volumeMl;
-    sum.residualMl += part.residualMl * volumeMl;
+    mixed.ethanolG += part.ethanolG * volumeMl;
+    mixed.waterG += part.waterG * volumeMl;
+    mixed.sugarG += part.sugarG * volumeMl;
+    mixed.restG += part.restG * volumeMl;
+    mixed.residualMl += part.residualMl * volumeMl;
+    if (part.acidsG === NO_ACIDS) continue;
+    acidsG ??= { ...NO_ACIDS };
     for (const key of ACID_KEYS) acidsG[key] += part.acidsG[key] * volumeMl;
   }
-  return { ...sum, acidsG };
+  if (acidsG !== null) mixed.acidsG = acidsG;
+  return mixed;
 }
 
 /** One millilitre of water at 20 C. */

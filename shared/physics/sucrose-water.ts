@@ -18,7 +18,8 @@ const [c1, c2, c3, c4, c5, c6] = [385.1761, 135.3705, 40.9299, -3.9643, 13.4853,
 
 const PERCENT = 100;
 const ML_PER_L = 1000;
-const MASS_FRACTION_TOLERANCE = 1e-13;
+/** Last Newton step of an inverse; what is left is of the order of its square. */
+const MASS_FRACTION_TOLERANCE = 1e-8;
 
 /**
  * Density at 20 C of a sugar solution, unchecked: for inner loops.
@@ -81,7 +82,7 @@ function sugarMassFractionAt20(cGPerMl: number): number {
     const density = sucroseDensityAt20(w);
     const step = (w * density - cGPerMl) / (density + w * sucroseDensitySlopeAt20(w));
     w -= step;
-    if (Math.abs(step) <= MASS_FRACTION_TOLERANCE) return w;
+    if (Math.abs(step) <= MASS_FRACTION_TOLERANCE) return Math.min(1, Math.max(0, w));
   }
   throw new DomainError({
     quantity: 'sugarGPerMl',

@@ -7,7 +7,7 @@
  * E = m_e / rho_e ethanol volume [mL], m masses [g], V volume [mL]. Sources: oiv-as2-03b, hackbarth-2009, hackbarth-2011
  * (docs/sources/ternary.md).
  */
-import { DomainError, requireWithin } from './domain-error.ts';
+import { DomainError, requireNotNegative, requireWithin } from './domain-error.ts';
 import {
   ETHANOL_DENSITY_G_PER_ML,
   WATER_DENSITY_G_PER_ML,
@@ -26,8 +26,8 @@ export const TABARIE_PUBLISHED_RANGE = {
 /** Outside the published range, a difference of the two models beyond this is worth a warning [1]: 0.1 % of volume. */
 export const MODEL_DIFFERENCE_WARNING = 0.001;
 
-/** Relative tolerance of a volume [1]. */
-export const VOLUME_TOLERANCE = 1e-12;
+/** Last Newton step of a volume, relative to it [1]; what is left is of the order of its square. */
+export const VOLUME_STEP_TOLERANCE = 1e-8;
 
 /** Masses of the three that make up most of any drink [g]. */
 export interface TernaryMasses {
@@ -48,7 +48,7 @@ export interface TernaryMasses {
  * Limits:    published as good to 18 % mass ethanol and 5 % mass sugar; stronger sweet liquids are a little more
  *            voluminous than it says
  * Source:    OIV-MA-AS2-03B; Hackbarth 2009 and 2011 for its validity
- * @example   tabarieDensityGPerMl({ abvFraction: 0.2, sugarGPerMl: 0.25 }) // 1.0692
+ * @example   tabarieDensityGPerMl({ abvFraction: 0.2, sugarGPerMl: 0.25 }) // 1.0691
  */
 export function tabarieDensityGPerMl(input: { abvFraction: number; sugarGPerMl: number }): number {
   const q = requireWithin({ quantity: 'abvFraction', value: input.abvFraction, min: 0, max: 1 });
@@ -74,7 +74,7 @@ export function tabarieDensityGPerMl(input: { abvFraction: number; sugarGPerMl: 
  * Accuracy:  as tabarieDensityGPerMl
  * Limits:    as tabarieDensityGPerMl
  * Source:    OIV-MA-AS2-03B
- * @example   tabarieMassG({ volumeMl: 100, ethanolMl: 20, sugarG: 25 }).value // 106.92
+ * @example   tabarieMassG({ volumeMl: 100, ethanolMl: 20, sugarG: 25 }).value // 106.91
  */
 export function tabarieMassG(input: { volumeMl: number; ethanolMl: number; sugarG: number }): ValueAndSlope {
   const q = input.ethanolMl / input.volumeMl;
@@ -86,6 +86,15 @@ export function tabarieMassG(input: { volumeMl: number; ethanolMl: number; sugar
     value: input.volumeMl * density,
     slope: density - q * ethanolWater.slopeGPerMl - c * sugarWater.slope,
   };
+}
+
+/** Mass that fills a volume less the mass there is. */
+function excessMass(
+  volumeMl: number,
+  given: { ethanolMl: number; sugarG: number; massG: number },
+): ValueAndSlope {
+  const filled = tabarieMassG({ volumeMl, ethanolMl: given.ethanolMl, sugarG: given.sugarG });
+  return { value: filled.value - given.massG, slope: filled.slope };
 }
 
 /**
@@ -102,7 +111,9 @@ export function tabarieMassG(input: { volumeMl: number; ethanolMl: number; sugar
  * @example   tabarieVolumeMl({ ethanolG: 39.462, waterG: 53.552, sugarG: 0 }) // 100.00
  */
 export function tabarieVolumeMl(masses: TernaryMasses): number {
-  const { ethanolG, waterG, sugarG } = masses;
+  const ethanolG = requireNotNegative({ quantity: 'ethanolG', value: masses.ethanolG });
+  const waterG = requireNotNegative({ quantity: 'waterG', value: masses.waterG });
+  const sugarG = requireNotNegative({ quantity: 'sugarG', value: masses.sugarG });
   if (sugarG === 0) return ethanolWaterVolumeMl({ ethanolG, waterG });
   if (ethanolG === 0) return sugarWaterVolumeMl({ sugarG, waterG });
   const ethanolMl = ethanolG / ETHANOL_DENSITY_G_PER_ML;
@@ -111,15 +122,13 @@ export function tabarieVolumeMl(masses: TernaryMasses): number {
   const massG = ethanolG + waterG + sugarG;
   const high = waterMl + ethanolMl + dryMl;
   const root = solveIncreasing({
-    evaluate: (volumeMl) => {
-      const filled = tabarieMassG({ volumeMl, ethanolMl, sugarG });
-      return { value: filled.value - massG, slope: filled.slope };
-    },
+    evaluate: excessMass,
+    given: { ethanolMl, sugarG, massG },
     low: Math.max(ethanolMl, dryMl),
     high,
     start: waterBasisVolumeMl(masses),
-    tolerance: VOLUME_TOLERANCE * high,
-    isBracketProved: waterG >= 0,
+    tolerance: VOLUME_STEP_TOLERANCE * high,
+    isBracketProved: true,
   });
   if (!root.ok) throw new DomainError({ quantity: 'waterG', value: waterG, min: 0, max: Number.MAX_VALUE });
   return root.x;
