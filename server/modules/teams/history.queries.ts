@@ -7,8 +7,6 @@ import { problems } from '../../http/problems.ts';
 import { isUuid } from '../../http/uuid.ts';
 import { AuditEvent } from './team.entity.ts';
 
-const DAY_MS = 86_400_000;
-
 /**
  * A page of a team's history, the newest first. Days are those of UTC, both ends included. The cursor is the id of
  * the last event shown: events are never deleted, and the database compares its time with all its digits.
@@ -20,8 +18,8 @@ export async function findHistory(
   refuseBackwards({ from, to });
   const builder = em.createQueryBuilder(AuditEvent, 'e').where({ team: teamId });
   if (subjectId !== undefined) builder.andWhere({ subjectId });
-  if (from !== undefined) builder.andWhere({ at: { $gte: new Date(from) } });
-  if (to !== undefined) builder.andWhere({ at: { $lt: new Date(new Date(to).getTime() + DAY_MS) } });
+  if (from !== undefined) builder.andWhere(`e.at >= ?::date::timestamp at time zone 'UTC'`, [from]);
+  if (to !== undefined) builder.andWhere(`e.at < (?::date + 1)::timestamp at time zone 'UTC'`, [to]);
   if (cursor !== undefined) {
     await refuseForeignCursor(em, { teamId, cursor });
     builder.andWhere('(e.at, e.id) < (select c.at, c.id from audit_event c where c.id = ?)', [cursor]);
