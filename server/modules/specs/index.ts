@@ -1,5 +1,6 @@
 export { specRoutes } from './routes.ts';
-export { createSpec, putDraft, branchSpec } from './spec.service.ts';
+export { branchSpec, createSpec, putDraft, readSpec } from './spec.service.ts';
 export { saveVersion } from './version.service.ts';
 export { changeState, lockVersion } from './version-state.service.ts';
+
 export { addNote } from './note.service.ts';

@@ -46,7 +46,9 @@ export async function addNote(
   const summary = `Noted a tasting of ${titleOf(version.spec)} version ${version.number}`;
   recordSpecEvent(context, { spec: version.spec, action: 'note.added', summary });
   await em.flush();
-  return toNote(await loadNote(em.fork(), { teamId, versionId, noteId: note.id }));
+  return toNote(
+    await loadNote(em.fork({ keepTransactionContext: true }), { teamId, versionId, noteId: note.id }),
+  );
 }
 
 interface OwnNote {

@@ -77,7 +77,7 @@ export async function branchSpec(
 }
 
 export async function readSpec({ em, teamId }: ActingContext, specId: string): Promise<SpecResource> {
-  const fresh = em.fork();
+  const fresh = em.fork({ keepTransactionContext: true });
   const spec = await loadSpec(fresh, { teamId, specId });
   return toSpec(spec, await findSiblings(fresh, spec));
 }

@@ -1,4 +1,4 @@
-import { type EntityManager, LockMode } from '@mikro-orm/postgresql';
+import { type EntityManager, LockMode, raw } from '@mikro-orm/postgresql';
 
 import { problems } from '../../http/problems.ts';
 import { SpecVersion, TastingNote } from './spec.entity.ts';
@@ -70,9 +70,9 @@ export async function countNotes(
   if (versions.length === 0) return new Map();
   const rows = await em
     .createQueryBuilder(TastingNote, 'n')
-    .select(['n.version_id as "versionId"', 'count(*)::int as "count"'])
+    .select([raw('n.version_id as version_id'), raw('count(*)::int as count')])
     .where({ version: { $in: versions.map((version) => version.id) } })
     .groupBy('n.version_id')
-    .execute<{ versionId: string; count: number }[]>('all', false);
-  return new Map(rows.map(({ versionId, count }) => [versionId, count]));
+    .execute<{ version_id: string; count: number }[]>('all', false);
+  return new Map(rows.map((row) => [row.version_id, row.count]));
 }

@@ -133,7 +133,7 @@ export async function readVersions(
   { em, teamId }: Pick<ActingContext, 'em' | 'teamId'>,
   ids: readonly string[],
 ): Promise<Version[]> {
-  const fresh = em.fork();
+  const fresh = em.fork({ keepTransactionContext: true });
   const versions = await loadVersions(fresh, { teamId, ids });
   const counts = await countNotes(fresh, versions);
   return versions.map((version) => toVersion(version, counts.get(version.id) ?? 0));
