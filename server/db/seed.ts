@@ -40,7 +40,7 @@ export async function isEmpty(orm: MikroORM): Promise<boolean> {
 /** Loads the invented team of the Gannet Room, and a second team that its developer also belongs to. All or nothing. */
 export async function seedDemo(orm: MikroORM): Promise<void> {
   await orm.em.fork().transactional(async (transaction) => {
-    const em = transaction as EntityManager;
+    const em = transaction;
     const people = await addPeople(em);
     const team = await addTeam(em, people);
     const story = new DemoStory(em, team, people);

@@ -178,7 +178,7 @@ export function inTransaction<Result>(
   context: ActingContext,
   work: (inside: ActingContext) => Promise<Result>,
 ): Promise<Result> {
-  return context.em.transactional((em) => work({ ...context, em: em as EntityManager }));
+  return context.em.transactional((em) => work({ ...context, em: em }));
 }
 
 export async function refuseStaleDraft(context: ActingContext, spec: Spec, ifMatch: number): Promise<void> {
