@@ -1,6 +1,5 @@
 import { randomUUID } from 'node:crypto';
 
-import type { EntityManager } from '@mikro-orm/postgresql';
 
 import type { FieldError } from '#shared/contracts/problem.ts';
 import type {
