@@ -147,9 +147,8 @@ function peopleOf({ orm, sessions }: Dependencies, newClient: () => ApiClient) {
     const id = randomUUID();
     const settings = { country: 'GB', currency: 'GBP', houseMeasures: DEFAULT_HOUSE_MEASURES } as const;
     await orm.em.fork().insert(Team, { id, name, ...settings });
-    const pairs: [Role, TestMember][] = [];
-    for (const role of ROLES) pairs.push([role, await addMember({ teamId: id, roles: [role] })]);
-    const members = Object.fromEntries(pairs) as Record<Role, TestMember>;
+    const pairs = ROLES.map(async (role) => [role, await addMember({ teamId: id, roles: [role] })] as const);
+    const members = Object.fromEntries(await Promise.all(pairs)) as Record<Role, TestMember>;
     return { id, name, members, as: (role) => members[role].client };
   };
   return { stranger: newClient, addPerson, addMember, addTeam };
