@@ -148,19 +148,14 @@ class DemoStory {
 
   /** The context of one of the team's people, two hours after the step before. */
   #as(key: DemoPersonKey): ActingContext {
+    this.#hours = Math.min(this.#hours + 2, STORY_HOURS);
     const { id, email, name } = this.#people[key];
     const { roles } = DEMO_PEOPLE[key];
-    return {
-      em: this.#em,
-      teamId: this.#team.id,
-      person: { id, email, name },
-      roles,
-      now: () => this.#now(),
-    };
+    const now = this.#now();
+    return { em: this.#em, teamId: this.#team.id, person: { id, email, name }, roles, now: () => now };
   }
 
   #now(): Date {
-    this.#hours = Math.min(this.#hours + 2, STORY_HOURS);
     return new Date(this.#start + this.#hours * HOUR_MS);
   }
 }
