@@ -2,6 +2,7 @@ import type { RouteLocationRaw, RouteRecordRaw } from 'vue-router';
 
 import { usePreferencesStore } from '#src/stores/preferences.ts';
 import { useSessionStore } from '#src/stores/session.ts';
+import { localPath } from './local-path.ts';
 
 declare module 'vue-router' {
   interface RouteMeta {
@@ -184,11 +185,6 @@ function toLastTeam(): RouteLocationRaw | true {
   const team =
     teams.find(({ teamId }) => teamId === lastTeamId) ?? (teams.length === 1 ? teams[0] : undefined);
   return team === undefined ? true : { name: 'specs', params: { teamId: team.teamId } };
-}
-
-/** A path of this site to go back to; anything that could lead elsewhere is ignored. */
-export function localPath(value: unknown): string | null {
-  return typeof value === 'string' && /^\/(?![/\\])/.test(value) ? value : null;
 }
 
 function wordsOf(value: unknown): string[] {

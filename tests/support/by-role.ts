@@ -14,7 +14,8 @@ const SELECTORS = {
   rowheader: 'th[scope=row]',
   slider: 'input[type=range], [role=slider]',
   table: 'table',
-  textbox: 'input:not([type]), input[type=text], input[type=search], input[type=date], textarea',
+  textbox:
+    'input:not([type]), input[type=text], input[type=email], input[type=search], input[type=date], textarea',
 } as const;
 type FoundRole = keyof typeof SELECTORS;
 
@@ -35,6 +36,16 @@ export function byRole<Found extends HTMLElement = HTMLElement>(
   if (found.length === 1 && first !== undefined) return first as Found;
   const present = allByRole(root, role).map((element) => `“${accessibleName(element)}”`);
   throw new Error(`${found.length} of role ${role} named ${String(name)}; there are ${present.join(', ')}`);
+}
+
+/** The only field of that name, of whatever kind: a password field has no role. */
+export function fieldNamed(root: ParentNode, name: string | RegExp): HTMLInputElement {
+  const fields = [...root.querySelectorAll<HTMLInputElement>('input, textarea, select')];
+  const found = fields.filter((field) => matches(accessibleName(field), name));
+  const [first] = found;
+  if (found.length === 1 && first !== undefined) return first;
+  const present = fields.map((field) => `“${accessibleName(field)}”`);
+  throw new Error(`${found.length} fields named ${String(name)}; there are ${present.join(', ')}`);
 }
 
 /** Types into a field as a person does. */
