@@ -4,6 +4,8 @@ import { setTimeout as wait } from 'node:timers/promises';
 import { PROJECT_ROOT } from '#server/setup/paths.mjs';
 import { freePort } from '#server/setup/ports.mjs';
 
+import { type Guard, startGuard } from './guard.ts';
+
 /** The real server as a process of its own. */
 export interface AppServer {
   baseUrl: string;
@@ -14,7 +16,7 @@ export interface AppServer {
   stop: (signal?: NodeJS.Signals) => Promise<number | null>;
 }
 
-const START_MS = 60_000;
+const START_MS = 120_000;
 const POLL_MS = 100;
 
 /** Starts `server/main.ts` with these settings on a free port and waits until it answers. */
@@ -44,6 +46,9 @@ export async function runServerToItsEnd(
   return { code, output: output() };
 }
 
+/** Ends servers that a test left running, for example because its time was up. */
+let guard: Guard | undefined;
+
 function spawnServer(settings: Record<string, string>) {
   const child = spawn(process.execPath, ['--import', 'tsx', 'server/main.ts'], {
     cwd: PROJECT_ROOT,
@@ -53,7 +58,15 @@ function spawnServer(settings: Record<string, string>) {
   let text = '';
   child.stdout.on('data', (chunk: Buffer) => (text += chunk.toString()));
   child.stderr.on('data', (chunk: Buffer) => (text += chunk.toString()));
-  const ended = new Promise<number | null>((resolve) => child.once('close', (code) => resolve(code)));
+  const { pid = 0 } = child;
+  guard ??= startGuard();
+  guard.order({ kind: 'end', pid });
+  const ended = new Promise<number | null>((resolve) => {
+    child.once('close', (code) => {
+      guard?.order({ kind: 'forget', pid });
+      resolve(code);
+    });
+  });
   return { child, output: () => text, ended };
 }
 

@@ -19,7 +19,6 @@ export async function setup(project: TestProject): Promise<() => Promise<void>> 
       OXYMEL_DEMO: 'on',
       OXYMEL_RATE_LIMIT_FACTOR: '1000',
     });
-    guard.order({ kind: 'end', pid: server.pid });
     project.provide('postgresAdminUrl', adminUrl);
     project.provide('baseUrl', server.baseUrl);
     return async () => {

@@ -1,4 +1,5 @@
-import { rmSync } from 'node:fs';
+import { readFileSync, rmSync } from 'node:fs';
+import { setTimeout as wait } from 'node:timers/promises';
 
 import { stopClusterIn } from '../../server/setup/cluster.mjs';
 
@@ -6,32 +7,38 @@ import { stopClusterIn } from '../../server/setup/cluster.mjs';
  * Cleans up after a test run, however it ends. It runs as a process of its own and reads one order a line; when its input
  * ends, which also happens when the run is killed, it carries them out, the last one first, and ends.
  *
- * @typedef {{ kind: 'end', pid: number } | { kind: 'stop', cluster: string } | { kind: 'remove', folder: string }} Order
+ * @typedef {{ kind: 'end', pid: number } | { kind: 'forget', pid: number } | { kind: 'stop', cluster: string } | { kind: 'remove', folder: string }} Order
  */
 
-const CHUNKS = [];
+const PATIENCE_MS = 15_000;
+const POLL_MS = 100;
+const chunks = [];
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => undefined);
-for await (const chunk of process.stdin) CHUNKS.push(chunk);
+for await (const chunk of process.stdin) chunks.push(chunk);
 
-const orders = Buffer.concat(CHUNKS)
+const orders = Buffer.concat(chunks)
   .toString()
   .split('\n')
   .filter((line) => line !== '')
   .map((line) => /** @type {Order} */ (JSON.parse(line)));
 
+const forgotten = new Set(orders.flatMap((order) => (order.kind === 'forget' ? [order.pid] : [])));
+
 for (const order of orders.reverse()) {
   try {
-    carryOut(order);
+    await carryOut(order);
   } catch (error) {
     console.error(`clean-up after the tests: ${String(error)}`);
   }
 }
 
 /** @param {Order} order */
-function carryOut(order) {
+async function carryOut(order) {
   switch (order.kind) {
     case 'end':
-      endProcess(order.pid);
+      if (!forgotten.has(order.pid)) await endProcess(order.pid);
+      break;
+    case 'forget':
       break;
     case 'stop':
       stopClusterIn(order.cluster);
@@ -42,11 +49,25 @@ function carryOut(order) {
   }
 }
 
+/**
+ * Asks a process to end, and makes it when it does not.
+ *
+ * @param {number} pid
+ */
+async function endProcess(pid) {
+  const deadline = Date.now() + PATIENCE_MS;
+  for (let asked = false; isLiving(pid); asked = true) {
+    if (Date.now() > deadline) process.kill(pid, 'SIGKILL');
+    else if (!asked) process.kill(pid, 'SIGTERM');
+    await wait(POLL_MS);
+  }
+}
+
 /** @param {number} pid */
-function endProcess(pid) {
+function isLiving(pid) {
   try {
-    process.kill(pid, 'SIGKILL');
+    return readFileSync(`/proc/${pid}/stat`, 'utf8').split(') ')[1]?.[0] !== 'Z';
   } catch {
-    // It has ended already.
+    return false;
   }
 }

@@ -16,7 +16,9 @@ export function startGuard(): Guard {
   const script = fileURLToPath(new URL('./guard.mjs', import.meta.url));
   const child = spawn(process.execPath, [script], { detached: true, stdio: ['pipe', 'ignore', 'inherit'] });
   const ended = new Promise<void>((resolve) => child.once('close', () => resolve()));
+  // Neither the process nor the pipe to it keeps this one alive.
   child.unref();
+  if ('unref' in child.stdin && typeof child.stdin.unref === 'function') child.stdin.unref();
   return {
     order: (order) => void child.stdin.write(`${JSON.stringify(order)}\n`),
     finish: async () => {
