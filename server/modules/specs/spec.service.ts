@@ -1,6 +1,5 @@
 import { randomUUID } from 'node:crypto';
 
-
 import type { FieldError } from '#shared/contracts/problem.ts';
 import type {
   Branch,
@@ -140,7 +139,7 @@ async function changeSpec(
 ): Promise<SpecResource> {
   await inTransaction(context, async (inside) => {
     const spec = await loadSpecForChange(inside.em, { teamId: inside.teamId, specId: guard.specId });
-    if (spec.revision !== guard.ifMatch) throw await staleSpec(context, spec, spec.revision);
+    if (spec.revision !== guard.ifMatch) throw await staleSpec(inside, spec, spec.revision);
     if (guard.evenRetired !== true) refuseRetired(spec);
     change(spec, inside);
     spec.revision += 1;
@@ -157,7 +156,7 @@ async function changeDraft(
 ): Promise<SpecResource> {
   await inTransaction(context, async (inside) => {
     const spec = await loadSpecForChange(inside.em, { teamId: inside.teamId, specId: guard.specId });
-    await refuseStaleDraft(context, spec, guard.ifMatch);
+    await refuseStaleDraft(inside, spec, guard.ifMatch);
     refuseRetired(spec);
     await change(spec, inside);
     spec.draftRevision += 1;
@@ -180,12 +179,16 @@ export function inTransaction<Result>(
   return context.em.transactional((em) => work({ ...context, em: em }));
 }
 
-export async function refuseStaleDraft(context: ActingContext, spec: Spec, ifMatch: number): Promise<void> {
-  if (spec.draftRevision !== ifMatch) throw await staleSpec(context, spec, spec.draftRevision);
+/**
+ * Refuses a draft that was written meanwhile. `inside` must be the context of the transaction that holds the spec: reading the
+ * present state on a second connection would, with enough people saving, wait for connections that wait for this row.
+ */
+export async function refuseStaleDraft(inside: ActingContext, spec: Spec, ifMatch: number): Promise<void> {
+  if (spec.draftRevision !== ifMatch) throw await staleSpec(inside, spec, spec.draftRevision);
 }
 
-async function staleSpec(context: ActingContext, spec: Spec, revision: number) {
-  return problems.staleVersion(revision, await readSpec(context, spec.id));
+async function staleSpec(inside: ActingContext, spec: Spec, revision: number) {
+  return problems.staleVersion(revision, await readSpec(inside, spec.id));
 }
 
 export function refuseRetired(spec: Spec): void {

@@ -125,7 +125,7 @@ async function changeVersion(
     const spec = await loadSpecForChange(em, { teamId, specId: owner.id });
     const version = await loadVersionForChange(em, { teamId, versionId });
     if (version.revision !== guard.ifMatch) {
-      throw problems.staleVersion(version.revision, await readVersion(context, versionId));
+      throw problems.staleVersion(version.revision, await readVersion(inside, versionId));
     }
     refuseRetired(spec);
     if (!guard.from.includes(version.state)) {

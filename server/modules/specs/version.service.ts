@@ -30,7 +30,7 @@ export async function saveVersion(
   await inTransaction(context, async (inside) => {
     const { em, teamId, person, now } = inside;
     const spec = await loadSpecForChange(em, { teamId, specId });
-    await refuseStaleDraft(context, spec, ifMatch);
+    await refuseStaleDraft(inside, spec, ifMatch);
     refuseRetired(spec);
     const snapshot = await takeSnapshot(inside, spec);
     const base = spec.draftBaseVersionId
