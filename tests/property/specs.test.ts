@@ -227,6 +227,7 @@ describe('two versions', () => {
           expect(sentence).not.toMatch(/undefined|null|NaN/);
         }
       }),
+      { numRuns: 100 },
     );
   });
 

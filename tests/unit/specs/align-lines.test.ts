@@ -75,6 +75,11 @@ describe('lines of several versions side by side', () => {
     expect(rowsOf(version(rum, float), version(other, { ...rum, id: anId(11) }))).toEqual(['01 11', '07 17']);
   });
 
+  it('stand in one row when the ingredient went to another stage under another id', () => {
+    const onTop = aLine({ id: anId(11), ingredientId: RUM_ID, stage: 'top' });
+    expect(rowsOf(version(rum, lime), version(lime, onTop))).toEqual(['01 11', '02 02']);
+  });
+
   it('say which rows differ: amount, stage, note or a gap', () => {
     const isSame = (line: SpecLine) => alignLines([version(rum, lime), version(line, lime)])[0]?.isSame;
     expect(isSame(rum)).toBe(true);
