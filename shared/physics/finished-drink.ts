@@ -63,8 +63,13 @@ function sumOfVolumesMl(portions: readonly Portion[]): number {
   return portions.reduce((sum, portion) => sum + portion.volumeMl, 0);
 }
 
+/** Rounding may leave a trace above pure ethanol; more than that is nonsense, and stops the calculation later. */
+const ABV_ROUNDING = 1e-9;
+
 function abvFractionOf(input: { ethanolG: number; volumeMl: number }): number {
-  return input.volumeMl === 0 ? 0 : input.ethanolG / ETHANOL_DENSITY_G_PER_ML / input.volumeMl;
+  if (input.volumeMl === 0) return 0;
+  const abvFraction = input.ethanolG / ETHANOL_DENSITY_G_PER_ML / input.volumeMl;
+  return abvFraction > 1 && abvFraction <= 1 + ABV_ROUNDING ? 1 : abvFraction;
 }
 
 function lighterThanComposition(portion: Portion): CalculationWarning {

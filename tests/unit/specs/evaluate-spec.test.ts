@@ -115,6 +115,17 @@ describe('the figures of a shaken sour', () => {
   });
 });
 
+describe('ethanol that is pure but for the last bit', () => {
+  it('is never stronger than pure: rounding is not nonsense', () => {
+    const ethanol = anIngredientSnapshot({ composition: { abvFraction: 0.9999999999999994 } });
+    const poured = [5.781728021633747, 39.60382465105607, 192.26730099691048];
+    const lines = poured.map((value) => aLine({ amount: { value, unit: 'ml' } }));
+    const figures = figuresOf({ body: aSpecBody({ lines }), ingredients: [ethanol] });
+    expect(figures.undilutedAbvFraction).toBeLessThanOrEqual(1);
+    expect(figures.undilutedAbvFraction).toBeCloseTo(1, 9);
+  });
+});
+
 describe('a line written in', () => {
   it.each([
     ['grams is that mass', '30 g', 30 / 1.23],
