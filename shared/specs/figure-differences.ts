@@ -89,6 +89,8 @@ export function figureDifferences(figures: readonly (Figures | null)[]): FigureR
 
 /** Takes the edge off binary fractions: 8.4 - 8.3 is a step of 0.1. */
 const STEP_TOLERANCE = 1e-9;
+/** What adding in another order may do to a value, relative. A ratio to a trace of acid is larger than its steps. */
+const ARITHMETIC_NOISE = 1e-9;
 
 function differenceTo(input: {
   readonly figure: ComparedFigure;
@@ -99,7 +101,8 @@ function differenceTo(input: {
   if (first === null || value === null) return { value, difference: null, direction: 'unknown' };
   const difference = value - first;
   const larger = Math.max(Math.abs(first), Math.abs(value));
-  const isShown = Math.abs(difference) >= shownStep({ figure, value: larger }) * (1 - STEP_TOLERANCE);
+  const step = shownStep({ figure, value: larger }) * (1 - STEP_TOLERANCE);
+  const isShown = Math.abs(difference) >= Math.max(step, ARITHMETIC_NOISE * larger);
   if (!isShown) return { value, difference, direction: 'same' };
   return { value, difference, direction: difference > 0 ? 'up' : 'down' };
 }

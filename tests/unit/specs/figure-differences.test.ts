@@ -40,6 +40,8 @@ describe('figures side by side', () => {
     ['acidCitricGPerL', 8.3, 8.4, 'up'],
     ['acidCitricGPerL', 8.4, 8.3, 'down'],
     ['acidCitricGPerL', 8.4, 8.4000000001, 'same'],
+    ['sugarAcidRatio', 4e15, 4e15 + 8, 'same'],
+    ['sugarAcidRatio', 4000, 4001, 'up'],
   ] as const)(
     '%s from %d to %d is %s: less than one step shown is no change',
     (figure, from, to, direction) => {
