@@ -56,13 +56,38 @@ export function csvRow(write: IngredientWrite): string[] {
   return INGREDIENT_CSV_COLUMNS.map((column) => cells[column]);
 }
 
-function numberBetween(limits: { min: number; max: number }, whenEmpty: number | null): Reader {
-  return (text) => {
-    if (text === '') return whenEmpty;
-    const parsed = parseNumber(text, limits);
-    if (!parsed.ok) throw new CellError(parsed.detail);
-    return parsed.value;
-  };
+interface Limits {
+  min: number;
+  max: number;
+}
+
+function numberBetween(limits: Limits, whenEmpty: number | null): Reader {
+  return (text) => (text === '' ? whenEmpty : numberIn(text, limits));
+}
+
+/** What spreadsheets write for very small and very large numbers. */
+const WITH_EXPONENT = /^[+-]?\d+(?:[.,]\d+)?e[+-]?\d{1,3}$/i;
+
+function numberIn(text: string, limits: Limits): number {
+  if (WITH_EXPONENT.test(text)) return withinLimits(Number(text.replace(',', '.')), limits);
+  const parsed = parseNumber(text, limits);
+  if (parsed.ok) return parsed.value;
+  const only = parsed.reason === 'ambiguous' ? onlySense(text, limits) : null;
+  if (only !== null) return only;
+  throw new CellError(parsed.detail);
+}
+
+function withinLimits(value: number, { min, max }: Limits): number {
+  if (value < min) throw new CellError(`${value} is too low: at least ${min}.`);
+  if (value > max) throw new CellError(`${value} is too high: at most ${max}.`);
+  return value;
+}
+
+/** `1,034` as a density can only be a decimal comma, since 1034 would be nonsense; null where both make sense. */
+function onlySense(text: string, limits: Limits): number | null {
+  const readings = ['.', ''].map((sign) => parseNumber(text.replace(',', sign), limits));
+  const [first, second] = readings.flatMap((reading) => (reading.ok ? [reading.value] : []));
+  return second === undefined ? (first ?? null) : null;
 }
 
 function percent(whenEmpty: number): Reader {
@@ -87,13 +112,13 @@ function listOfAllergens(text: string): unknown {
 
 function readPack(text: string): Pack {
   const [sizeText = '', price = '', pricedOn = ''] = text.split('|').map((part) => part.trim());
-  const match = /^([\d.]+)\s*(ml|g|piece)$/.exec(sizeText);
+  const match = /^([\d.,]+)\s*(ml|g|piece)$/.exec(sizeText);
   if (match === null)
     throw new CellError('a pack is written 700 ml|21.00|2026-11-01, several with ; between');
   return {
-    size: Number(match[1]),
+    size: Number(match[1]?.replace(',', '.')),
     sizeUnit: match[2] as Pack['sizeUnit'],
-    price: price === '' ? null : price,
+    price: price === '' ? null : price.replace(',', '.'),
     pricedOn: pricedOn === '' ? null : pricedOn,
   };
 }

@@ -60,17 +60,23 @@ function parsedRows(text: string): CsvRecord[] {
       bom: true,
       delimiter: delimiterOf(text),
       relax_column_count: true,
-      skip_empty_lines: true,
-      info: true,
-    }) as unknown as { record: string[]; info: { lines: number } }[];
-    return parsed.map(({ record }, index) => ({
-      line: (parsed[index - 1]?.info.lines ?? 0) + 1,
-      cells: record.map((cell) => (ESCAPED_FORMULA.test(cell) ? cell.slice(1) : cell)),
-    }));
+      raw: true,
+    }) as unknown as { record: string[]; raw: string }[];
+    return withLines(parsed).filter(({ cells }) => cells.some((cell) => cell.trim() !== ''));
   } catch (error) {
     if (error instanceof CsvError) throw refused(`The file cannot be read as CSV: ${error.message}.`);
     throw error;
   }
+}
+
+/** The line on which each record begins, by the line breaks before it. */
+function withLines(parsed: readonly { record: string[]; raw: string }[]): CsvRecord[] {
+  let line = 1;
+  return parsed.map(({ record, raw }) => {
+    const first = line;
+    line += raw.match(/\r\n|\n|\r/g)?.length ?? 0;
+    return { line: first, cells: record.map((cell) => (ESCAPED_FORMULA.test(cell) ? cell.slice(1) : cell)) };
+  });
 }
 
 function refused(detail: string) {
@@ -86,27 +92,45 @@ function delimiterOf(text: string): string {
 
 export type CsvMapping = Partial<Record<IngredientCsvColumn, number>>;
 
-/** Which column of the file is which of ours: as asked, or by the headings. */
-export function mappingOf(file: CsvFile, asked: IngredientImportRequest['mapping']): CsvMapping {
-  const mapping: CsvMapping = asked ?? guessedMapping(file.headings);
-  for (const [column, index] of Object.entries(mapping)) {
+/** A column of ours that more than one heading could mean. */
+export interface UnclearHeading {
+  column: IngredientCsvColumn;
+  headings: string[];
+}
+
+/** Which column of the file is which of ours: as asked, or by the headings. What they leave unclear is not guessed. */
+export function mappingOf(
+  file: CsvFile,
+  asked: IngredientImportRequest['mapping'],
+): { mapping: CsvMapping; unclear: UnclearHeading[] } {
+  if (asked === undefined) return guessedMapping(file.headings);
+  for (const [column, index] of Object.entries(asked)) {
     if (index >= file.headings.length) {
       const detail = `${column} is column no. ${index + 1}; the file has ${file.headings.length}.`;
       throw problems.invalidField(`#/mapping/${column}`, 'maximum', detail);
     }
   }
-  return mapping;
+  return { mapping: asked, unclear: [] };
 }
 
-function guessedMapping(headings: readonly string[]): CsvMapping {
-  const plain = (text: string) => text.toLowerCase().replaceAll(/[^a-z]/g, '');
+function guessedMapping(headings: readonly string[]): { mapping: CsvMapping; unclear: UnclearHeading[] } {
   const mapping: CsvMapping = {};
+  const unclear: UnclearHeading[] = [];
   for (const column of INGREDIENT_CSV_COLUMNS) {
-    const names = [plain(column), ...(OTHER_HEADINGS[column] ?? [])];
-    const index = headings.findIndex((heading) => names.includes(plain(heading)));
-    if (index >= 0) mapping[column] = index;
+    const found = headingsFor(column, headings);
+    if (found.length > 1) unclear.push({ column, headings: found.map((index) => headings[index] ?? '') });
+    else if (found[0] !== undefined) mapping[column] = found[0];
   }
-  return mapping;
+  return { mapping, unclear };
+}
+
+/** Where a column of ours stands in the file: under its own name, or else under another that people give it. */
+function headingsFor(column: IngredientCsvColumn, headings: readonly string[]): number[] {
+  const plain = (text: string) => text.toLowerCase().replaceAll(/[^a-z]/g, '');
+  const where = (names: readonly string[]) =>
+    headings.flatMap((heading, index) => (names.includes(plain(heading)) ? [index] : []));
+  const own = where([plain(column)]);
+  return own.length > 0 ? own : where(OTHER_HEADINGS[column] ?? []);
 }
 
 /** Headings that people write for our columns, with nothing but small letters. */

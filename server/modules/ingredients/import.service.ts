@@ -17,11 +17,18 @@ import { compileBodyCheck } from '../../http/validation.ts';
 import type { ActingContext } from '../../http/route.ts';
 import { recordEvent } from '../teams/index.ts';
 import { csvRow, readCsvRow } from './csv-columns.ts';
-import { type CsvMapping, type CsvRecord, mappingOf, readCsv, writeCsv } from './csv-file.ts';
+import {
+  type CsvMapping,
+  type CsvRecord,
+  type UnclearHeading,
+  mappingOf,
+  readCsv,
+  writeCsv,
+} from './csv-file.ts';
 import { Ingredient } from './ingredient.entity.ts';
 import { columnsOf, toIngredientWrite } from './ingredient.mapper.ts';
 import { findBackBar } from './ingredient.queries.ts';
-import { nonsenseIn } from './ingredient.service.ts';
+import { changeBackBar, nonsenseIn } from './ingredient.service.ts';
 
 type PreviewRow = IngredientImportPreview['rows'][number];
 type ImportError = IngredientImportPreview['errors'][number];
@@ -42,36 +49,44 @@ export async function previewImport(
 }
 
 /** Does what the preview showed, in one transaction: rows without errors are written, the others are not. */
-export async function applyImport(
-  { em, teamId, person }: ActingContext,
+export function applyImport(
+  context: ActingContext,
   request: IngredientImportRequest,
 ): Promise<IngredientImportResult> {
-  const { preview, existing } = planImport(await findBackBar(em, teamId), request);
-  const { create, update, unchanged } = preview.counts;
-  if (create + update + unchanged === 0) {
-    throw problems.invalidField('#/csv', 'nothing-to-import', 'No row of the file can be taken as it is.');
-  }
+  return changeBackBar(context, async (inside) => {
+    const { em, teamId } = inside;
+    const plan = planImport(await findBackBar(em, teamId), request);
+    const { create, update, unchanged } = plan.preview.counts;
+    if (create + update + unchanged === 0) {
+      throw problems.invalidField('#/csv', 'nothing-to-import', 'No row of the file can be taken as it is.');
+    }
+    writePlan(inside, plan);
+    if (create + update > 0) recordImport(inside, { create, update });
+    await em.flush();
+    return { created: create, updated: update, unchanged };
+  });
+}
+
+function writePlan({ em, teamId }: ActingContext, { preview, existing }: ImportPlan): void {
   for (const { action, name, ingredient } of preview.rows) {
     if (ingredient === null) continue;
-    if (action === 'create')
+    if (action === 'create') {
       em.create(Ingredient, { id: randomUUID(), team: teamId, ...columnsOf(ingredient) });
+    }
     const known = existing.get(name.toLowerCase());
-    if (action === 'update' && known)
+    if (action === 'update' && known) {
       em.assign(known, columnsOf(ingredient), { mergeObjectProperties: false });
+    }
   }
-  if (create + update > 0) {
-    const summary = `Imported ingredients from CSV: ${create} added, ${update} changed`;
-    recordEvent(em, {
-      teamId,
-      person,
-      action: 'ingredient.imported',
-      subjectType: 'team',
-      subjectId: teamId,
-      summary,
-    });
-  }
-  await em.flush();
-  return { created: create, updated: update, unchanged };
+}
+
+function recordImport(
+  { em, teamId, person }: ActingContext,
+  { create, update }: { create: number; update: number },
+): void {
+  const summary = `Imported ingredients from CSV: ${create} added, ${update} changed`;
+  const subject = { subjectType: 'team', subjectId: teamId };
+  recordEvent(em, { teamId, person, action: 'ingredient.imported', ...subject, summary });
 }
 
 interface ImportPlan {
@@ -82,14 +97,15 @@ interface ImportPlan {
 
 function planImport(backBar: readonly Ingredient[], request: IngredientImportRequest): ImportPlan {
   const file = readCsv(request.csv);
-  const mapping = mappingOf(file, request.mapping);
+  const { mapping, unclear } = mappingOf(file, request.mapping);
   if (mapping.name === undefined) {
     throw problems.invalidField('#/mapping/name', 'required', 'Say which column of the file holds the name.');
   }
   const existing = new Map(backBar.map((ingredient) => [ingredient.name.toLowerCase(), ingredient]));
   const seen = new Map<string, number>();
-  const errors: ImportError[] = [];
-  const rows = file.records.map((record) => planRow({ record, mapping, existing, seen, errors }));
+  const errors = unclear.map(unclearHeading);
+  const width = file.headings.length;
+  const rows = file.records.map((record) => planRow({ record, width, mapping, existing, seen, errors }));
   const count = (action: PreviewRow['action']) => rows.filter((row) => row.action === action).length;
   const counts = {
     create: count('create'),
@@ -100,17 +116,24 @@ function planImport(backBar: readonly Ingredient[], request: IngredientImportReq
   return { preview: { headings: file.headings, mapping, rows, errors, counts }, existing };
 }
 
+function unclearHeading({ column, headings }: UnclearHeading): ImportError {
+  const detail = `${headings.length} columns could be ${column}; choose one, or none is taken`;
+  return { row: 1, column, value: headings.join(', ').slice(0, 100), detail };
+}
+
 function planRow(input: {
   record: CsvRecord;
+  /** How many columns the headings name. */
+  width: number;
   mapping: CsvMapping;
   existing: ReadonlyMap<string, Ingredient>;
   seen: Map<string, number>;
   errors: ImportError[];
 }): PreviewRow {
-  const { record, mapping, existing, seen, errors } = input;
+  const { record, width, mapping, existing, seen, errors } = input;
   const cell = (column: IngredientCsvColumn) => {
     const index = mapping[column];
-    return index === undefined ? undefined : (record.cells[index] ?? '');
+    return index === undefined ? undefined : record.cells[index];
   };
   const name = (cell('name') ?? '').trim();
   const key = name.toLowerCase();
@@ -120,7 +143,7 @@ function planRow(input: {
     (column) => cell(column) ?? present?.[INGREDIENT_CSV_COLUMNS.indexOf(column)] ?? '',
   );
 
-  const found = result.ok ? problemsOf(result.write) : result.problems;
+  const found = surplusCells(record, width) ?? (result.ok ? problemsOf(result.write, cell) : result.problems);
   const earlier = seen.get(key);
   if (name !== '' && earlier !== undefined) {
     found.push({ column: 'name', value: name, detail: `line ${earlier} already has this name` });
@@ -141,12 +164,22 @@ function isSame(known: Ingredient, write: IngredientWrite): boolean {
 type RowProblem = Omit<ImportError, 'row'>;
 
 /** What the contract and the physics say against a row, at the column each is about. */
-function problemsOf(write: IngredientWrite): RowProblem[] {
-  return [...contractErrors(write), ...nonsenseIn(write)].map(({ pointer, detail }) => ({
-    column: columnOfPointer(pointer),
-    value: '',
-    detail,
-  }));
+function problemsOf(
+  write: IngredientWrite,
+  cell: (column: IngredientCsvColumn) => string | undefined,
+): RowProblem[] {
+  return [...contractErrors(write), ...nonsenseIn(write)].map(({ pointer, detail }) => {
+    const column = columnOfPointer(pointer);
+    return { column, value: column === null ? '' : (cell(column) ?? '').slice(0, 100), detail };
+  });
+}
+
+/** A row with more cells than headings: a separator too many has shifted its values into the wrong columns. */
+function surplusCells({ cells }: CsvRecord, width: number): RowProblem[] | null {
+  const surplus = cells.slice(width).filter((cell) => cell.trim() !== '');
+  if (surplus.length === 0) return null;
+  const detail = `the row has ${cells.length} cells and the file ${width} headings; put text with a separator in quotes`;
+  return [{ column: null, value: surplus.join(', ').slice(0, 100), detail }];
 }
 
 function contractErrors(write: IngredientWrite): FieldError[] {

@@ -1,4 +1,8 @@
-import type { Ingredient as IngredientResource, IngredientWrite } from '#shared/contracts/ingredient.ts';
+import type {
+  CompositionKnowledge,
+  Ingredient as IngredientResource,
+  IngredientWrite,
+} from '#shared/contracts/ingredient.ts';
 import { type Role, hasPermission } from '#shared/contracts/roles.ts';
 import type { IngredientSnapshot } from '#shared/contracts/version.ts';
 import { acidAsCitric } from '#shared/physics/acids.ts';
@@ -42,8 +46,11 @@ export function toIngredientSnapshot(ingredient: Ingredient): IngredientSnapshot
   };
 }
 
+/** What of an ingredient a person writes, as it is kept. */
+type WrittenColumns = ReturnType<typeof columnsOf> | Ingredient;
+
 /** Everything a person may write, as it stands: what an import compares with and an export writes. */
-export function toIngredientWrite(ingredient: Ingredient): IngredientWrite {
+export function toIngredientWrite(ingredient: WrittenColumns): IngredientWrite {
   return {
     name: ingredient.name,
     category: ingredient.category,
@@ -57,7 +64,7 @@ export function toIngredientWrite(ingredient: Ingredient): IngredientWrite {
   };
 }
 
-function compositionOf(ingredient: Ingredient): Composition {
+function compositionOf(ingredient: WrittenColumns): Composition {
   return {
     abvFraction: ingredient.abvFraction,
     sugarGPerL: ingredient.sugarGPerL,
@@ -72,18 +79,31 @@ export function columnsOf(write: IngredientWrite) {
   return {
     name: write.name.trim(),
     category: write.category,
-    abvFraction: composition.abvFraction,
+    abvFraction: tidyFraction(composition.abvFraction),
     sugarGPerL: composition.sugarGPerL,
     acidsGPerL: presentAcids(composition.acidsGPerL),
     acidCitricGPerL: acidAsCitric(composition.acidsGPerL),
     densityGPerMl: composition.densityGPerMl,
-    knowledge: write.knowledge,
+    knowledge: tidyKnowledge(write.knowledge),
     pieceMassG: write.pieceMassG,
     allergens: write.allergens,
     packs: write.packs,
     source: write.source.trim(),
     note: write.note.trim(),
   };
+}
+
+/** Digits that a fraction keeps on its way to percent and back. */
+const FRACTION_DIGITS = 15;
+
+/** A fraction without the trace that dividing percents leaves: 33.3 / 100 is kept as 0.333, and a CSV gives it back alike. */
+function tidyFraction(fraction: number): number {
+  return Number(fraction.toPrecision(FRACTION_DIGITS));
+}
+
+function tidyKnowledge({ abv, sugar, acid }: CompositionKnowledge): CompositionKnowledge {
+  const tidy = ({ how, spread }: CompositionKnowledge['abv']) => ({ how, spread: tidyFraction(spread) });
+  return { abv: tidy(abv), sugar: tidy(sugar), acid: tidy(acid) };
 }
 
 /** Acids that are there: 0 g/L and not named are the same. */

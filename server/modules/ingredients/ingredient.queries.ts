@@ -78,6 +78,14 @@ export async function loadIngredient(
   return ingredient;
 }
 
+/**
+ * Holds the team's back bar until the transaction ends: changes come one after the other, so that a name that was free a moment
+ * ago is still free, and two imports of one file add its rows once.
+ */
+export async function holdBackBar(em: EntityManager, teamId: string): Promise<void> {
+  await em.execute('select pg_advisory_xact_lock(hashtextextended(?, 0))', [`back bar of ${teamId}`]);
+}
+
 /** Another ingredient in use under the same name, whatever its letters' case. */
 export function findNamesake(
   em: EntityManager,

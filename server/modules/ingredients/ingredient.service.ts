@@ -8,69 +8,87 @@ import { ACID_KEYS } from '#shared/physics/composition.ts';
 import { fitOfComposition } from '#shared/physics/contents.ts';
 
 import { problems } from '../../http/problems.ts';
-import { flushBased, refuseStale } from '../../http/revision.ts';
+import { refuseStale } from '../../http/revision.ts';
 import type { ActingContext } from '../../http/route.ts';
 import { recordEvent } from '../teams/index.ts';
 import { describeIngredientChange } from './ingredient.changes.ts';
 import { Ingredient } from './ingredient.entity.ts';
 import { columnsOf, toIngredient, toIngredientWrite } from './ingredient.mapper.ts';
-import { findNamesake, loadIngredient } from './ingredient.queries.ts';
+import { findNamesake, holdBackBar, loadIngredient } from './ingredient.queries.ts';
 
-export async function addIngredient(
-  context: ActingContext,
-  write: IngredientWrite,
-): Promise<IngredientResource> {
-  const { em, teamId, roles } = context;
-  refuseNonsense(write);
-  await refuseNamesake(em, { teamId, name: write.name, exceptId: null });
-  const ingredient = em.create(Ingredient, { id: randomUUID(), team: teamId, ...columnsOf(write) });
-  recordIngredientEvent(context, {
-    ingredient,
-    action: 'ingredient.added',
-    summary: `Added ${ingredient.name}`,
+export function addIngredient(context: ActingContext, write: IngredientWrite): Promise<IngredientResource> {
+  return changeBackBar(context, async (inside) => {
+    const { em, teamId, roles } = inside;
+    refuseNonsense(write);
+    await refuseNamesake(em, { teamId, name: write.name, exceptId: null });
+    const ingredient = em.create(Ingredient, { id: randomUUID(), team: teamId, ...columnsOf(write) });
+    const summary = `Added ${ingredient.name}`;
+    recordIngredientEvent(inside, { ingredient, action: 'ingredient.added', summary });
+    await em.flush();
+    return toIngredient(ingredient, roles);
   });
-  await em.flush();
-  return toIngredient(ingredient, roles);
 }
 
-export async function changeIngredient(
+interface Guard {
+  ingredientId: string;
+  ifMatch: number;
+}
+
+export function changeIngredient(
   context: ActingContext,
-  { ingredientId, write, ifMatch }: { ingredientId: string; write: IngredientWrite; ifMatch: number },
+  { write, ...guard }: Guard & { write: IngredientWrite },
 ): Promise<IngredientResource> {
-  const { em, teamId, roles } = context;
-  const ingredient = await loadIngredient(em, { teamId, ingredientId });
-  refuseStale(ingredient, { ifMatch, current: () => toIngredient(ingredient, roles) });
-  refuseNonsense(write);
-  if (!ingredient.retiredAt) await refuseNamesake(em, { teamId, name: write.name, exceptId: ingredientId });
-  const before = toIngredientWrite(ingredient);
-  em.assign(ingredient, columnsOf(write), { mergeObjectProperties: false });
-  const summary = describeIngredientChange(before, toIngredientWrite(ingredient));
-  if (summary === null) return toIngredient(ingredient, roles);
-  recordIngredientEvent(context, { ingredient, action: 'ingredient.changed', summary });
-  await flushIngredient(context, ingredientId);
-  return toIngredient(ingredient, roles);
+  return changeBackBar(context, async (inside) => {
+    const { em, teamId, roles } = inside;
+    const ingredient = await loadGuarded(inside, guard);
+    refuseNonsense(write);
+    const exceptId = guard.ingredientId;
+    if (!ingredient.retiredAt) await refuseNamesake(em, { teamId, name: write.name, exceptId });
+    const columns = columnsOf(write);
+    const summary = describeIngredientChange(toIngredientWrite(ingredient), toIngredientWrite(columns));
+    if (summary === null) return toIngredient(ingredient, roles);
+    em.assign(ingredient, columns, { mergeObjectProperties: false });
+    recordIngredientEvent(inside, { ingredient, action: 'ingredient.changed', summary });
+    await em.flush();
+    return toIngredient(ingredient, roles);
+  });
 }
 
-export async function setIngredientRetired(
+export function setIngredientRetired(
   context: ActingContext,
-  { ingredientId, retired, ifMatch }: { ingredientId: string; retired: boolean; ifMatch: number },
+  { retired, ...guard }: Guard & { retired: boolean },
 ): Promise<IngredientResource> {
-  const { em, teamId, roles, now } = context;
-  const ingredient = await loadIngredient(em, { teamId, ingredientId });
-  refuseStale(ingredient, { ifMatch, current: () => toIngredient(ingredient, roles) });
-  if (!retired) await refuseNamesake(em, { teamId, name: ingredient.name, exceptId: ingredientId });
-  ingredient.retiredAt = retired ? now() : null;
-  const action = retired ? 'ingredient.retired' : 'ingredient.restored';
-  const summary = `${retired ? 'Retired' : 'Brought back'} ${ingredient.name}`;
-  recordIngredientEvent(context, { ingredient, action, summary });
-  await flushIngredient(context, ingredientId);
-  return toIngredient(ingredient, roles);
+  return changeBackBar(context, async (inside) => {
+    const { em, teamId, roles, now } = inside;
+    const ingredient = await loadGuarded(inside, guard);
+    if ((ingredient.retiredAt != null) === retired) return toIngredient(ingredient, roles);
+    const exceptId = guard.ingredientId;
+    if (!retired) await refuseNamesake(em, { teamId, name: ingredient.name, exceptId });
+    ingredient.retiredAt = retired ? now() : null;
+    const action = retired ? 'ingredient.retired' : 'ingredient.restored';
+    const summary = `${retired ? 'Retired' : 'Brought back'} ${ingredient.name}`;
+    recordIngredientEvent(inside, { ingredient, action, summary });
+    await em.flush();
+    return toIngredient(ingredient, roles);
+  });
 }
 
-function flushIngredient({ em, teamId, roles }: ActingContext, ingredientId: string): Promise<void> {
-  return flushBased(em, async (fresh) =>
-    toIngredient(await loadIngredient(fresh, { teamId, ingredientId }), roles),
-  );
+/** Runs a change of the back bar in a transaction, after those of other people and before the next. */
+export function changeBackBar<Result>(
+  context: ActingContext,
+  change: (inside: ActingContext) => Promise<Result>,
+): Promise<Result> {
+  return context.em.transactional(async (em) => {
+    await holdBackBar(em, context.teamId);
+    return change({ ...context, em });
+  });
+}
+
+/** The ingredient as it is now, unless the edit is based on an earlier revision. */
+async function loadGuarded({ em, teamId, roles }: ActingContext, guard: Guard): Promise<Ingredient> {
+  const ingredient = await loadIngredient(em, { teamId, ingredientId: guard.ingredientId });
+  refuseStale(ingredient, { ifMatch: guard.ifMatch, current: () => toIngredient(ingredient, roles) });
+  return ingredient;
 }
 
 /** What no schema can tell: parts that do not fit into a litre, an allergen in both lists. */
