@@ -29,6 +29,9 @@ export const DRINK_VOLUME_RANGE_ML = { min: Number.MIN_VALUE, max: 1_000_000 } a
 
 const ML_PER_L = 1000;
 
+/** Less acid than this is none: no method of the bar finds it, and a ratio to it says nothing [g/L as citric]. */
+export const LEAST_ACID_G_PER_L = 0.001;
+
 /** Every figure of the liquid; members mean what the contract's `Figures` says of them. */
 export interface FinishedDrink {
   readonly sumOfPartsMl: number;
@@ -153,6 +156,7 @@ function figuresOfLiquid(contents: Contents, volumeMl: number) {
   const { ethanolG, waterG, sugarG } = contents;
   const finalMassG = massGOfContents(contents);
   const acidCitricG = acidAsCitric(contents.acidsG);
+  const acidCitricGPerL = (acidCitricG / volumeMl) * ML_PER_L;
   const energy = energyOf({ ethanolG, sugarG, acidG: totalAcid(contents.acidsG) });
   return {
     finalMl: volumeMl,
@@ -165,8 +169,8 @@ function figuresOfLiquid(contents: Contents, volumeMl: number) {
     sugarGPerL: (sugarG / volumeMl) * ML_PER_L,
     acidsGPerL: acidsPerLitre(contents, volumeMl),
     acidCitricG,
-    acidCitricGPerL: (acidCitricG / volumeMl) * ML_PER_L,
-    sugarAcidRatio: acidCitricG > 0 ? sugarG / acidCitricG : null,
+    acidCitricGPerL,
+    sugarAcidRatio: acidCitricGPerL >= LEAST_ACID_G_PER_L ? sugarG / acidCitricG : null,
     energyKcal: energy.kcal,
     energyKj: energy.kJ,
     freezingPointC: freezingPointC(contents),

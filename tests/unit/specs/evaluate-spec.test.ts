@@ -115,6 +115,20 @@ describe('the figures of a shaken sour', () => {
   });
 });
 
+describe('a trace of acid that nobody could find', () => {
+  it.each([
+    [1e-320, null],
+    [0.0009, null],
+    [0.0011, 600 / 0.0011],
+  ])('%d g/L of citric acid beside sugar has the ratio %d', (citric, ratio) => {
+    const composition = aComposition({ sugarGPerL: 600, acidsGPerL: { citric } });
+    const body = aSpecBody({ lines: [aLine({ ingredientId: SYRUP_ID })], dilution: { kind: 'none' } });
+    const { sugarAcidRatio } = figuresOf({ body, ingredients: [aSyrup({ composition })] });
+    if (ratio === null) expect(sugarAcidRatio).toBeNull();
+    else expect((sugarAcidRatio ?? 0) / ratio).toBeCloseTo(1, 9);
+  });
+});
+
 describe('ethanol that is pure but for the last bit', () => {
   it('is never stronger than pure: rounding is not nonsense', () => {
     const ethanol = anIngredientSnapshot({ composition: { abvFraction: 0.9999999999999994 } });
