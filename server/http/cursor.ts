@@ -13,16 +13,30 @@ export function encodeCursor({ sort, value, id }: Cursor & { sort: string }): st
   return Buffer.from(JSON.stringify([sort, value, id])).toString('base64url');
 }
 
+/** What the values of a sort are: a cursor of another kind is none of that list's. */
+export type CursorKind = 'text' | 'number' | 'time';
+
 /** Reads a cursor of this very list and sort; anything else is refused at its field. */
-export function decodeCursor(text: string | undefined, sort: string): Cursor | null {
+export function decodeCursor(
+  text: string | undefined,
+  sort: string,
+  kind: CursorKind = 'text',
+): Cursor | null {
   if (text === undefined) return null;
   const [cursorSort, value, id] = parsed(text);
-  const isText = typeof value === 'string' && isStorableText(value);
-  const isValue = isText || (typeof value === 'number' && Number.isFinite(value));
-  if (cursorSort !== sort || !isValue || typeof id !== 'string' || !isUuid(id)) {
+  if (cursorSort !== sort || !isOfKind(value, kind) || typeof id !== 'string' || !isUuid(id)) {
     throw problems.invalidField('#/cursor', 'cursor', 'cursor is not one that this list and sort gave out.');
   }
   return { value, id };
+}
+
+/** Times are written as `toISOString` writes them, and only such a text gives itself back. */
+function isOfKind(value: unknown, kind: CursorKind): value is string | number {
+  if (kind === 'number') return typeof value === 'number' && Number.isFinite(value);
+  if (typeof value !== 'string') return false;
+  if (kind === 'text') return isStorableText(value);
+  const time = new Date(value);
+  return !Number.isNaN(time.getTime()) && time.toISOString() === value;
 }
 
 function parsed(text: string): unknown[] {

@@ -8,6 +8,8 @@ import {
 } from '#shared/contracts/ingredient.ts';
 import { ACID_KEYS } from '#shared/physics/composition.ts';
 
+const CONTROL = /\p{Cc}/gu;
+
 /** Text that a person may write, among it what spreadsheets take for formulas, quotes, separators and line breaks. */
 const text = fc
   .array(
@@ -37,13 +39,11 @@ const text = fc
   .map((parts) =>
     parts
       .join('')
-      .replaceAll(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/g, '')
+      .replaceAll(CONTROL, (sign) => (/[\t\n\r]/.test(sign) ? sign : ''))
       .trim(),
   );
 
-const name = text
-  .map((value) => value.replaceAll(/[\u0000-\u001f\u007f]/g, ' ').trim())
-  .filter((value) => value !== '');
+const name = text.map((value) => value.replaceAll(CONTROL, ' ').trim()).filter((value) => value !== '');
 
 /** A share of one as forms make it, by dividing percents, which leaves traces in the last digits; or any other. */
 const fraction = (max: number) =>

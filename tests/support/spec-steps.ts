@@ -115,11 +115,11 @@ export async function aSavedSour(
   return { specId, version: await save(place, specId), draft };
 }
 
-/** What the history says of a thing, the newest first. */
+/** What the history says of a thing, the newest first, with plain spaces. */
 export async function historyOf({ team, at }: Pick<Workplace, 'team' | 'at'>, subjectId: string) {
   const query = { subjectId };
   const page = await team
     .as('manager')
     .get<{ items: { action: string; summary: string }[] }>(`${at}/history`, { query });
-  return page.body.items.map(({ action, summary }) => `${action}: ${summary}`);
+  return page.body.items.map(({ action, summary }) => `${action}: ${summary}`.replaceAll(/\p{Zs}/gu, ' '));
 }

@@ -1,4 +1,4 @@
-import type { EntityManager } from '@mikro-orm/postgresql';
+import { type EntityManager, raw } from '@mikro-orm/postgresql';
 
 import { problems } from '../../http/problems.ts';
 import { Glass } from './glass.entity.ts';
@@ -6,8 +6,14 @@ import { Glass } from './glass.entity.ts';
 /** A team keeps tens of glasses, not thousands: the list is not paged. */
 const GLASS_LIMIT = 500;
 
-export async function findGlasses(em: EntityManager, teamId: string): Promise<Glass[]> {
-  return em.find(Glass, { team: teamId }, { orderBy: { name: 'asc', id: 'asc' }, limit: GLASS_LIMIT });
+/** Every glass by name, letters before case as people sort. */
+export function findGlasses(em: EntityManager, teamId: string): Promise<Glass[]> {
+  return em
+    .createQueryBuilder(Glass, 'g')
+    .where({ team: teamId })
+    .orderBy([{ [raw('g.name collate "und-x-icu"')]: 'asc' }, { id: 'asc' }])
+    .limit(GLASS_LIMIT)
+    .getResultList();
 }
 
 export function findGlass(

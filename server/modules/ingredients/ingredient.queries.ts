@@ -3,7 +3,7 @@ import { type EntityManager, raw } from '@mikro-orm/postgresql';
 import { PAGE_LIMIT, type Page } from '#shared/contracts/common.ts';
 import type { IngredientListQuery } from '#shared/contracts/ingredient.ts';
 
-import { containsPattern, decodeCursor, encodeCursor } from '../../http/cursor.ts';
+import { type CursorKind, containsPattern, decodeCursor, encodeCursor } from '../../http/cursor.ts';
 import { problems } from '../../http/problems.ts';
 import { Ingredient } from './ingredient.entity.ts';
 
@@ -20,18 +20,32 @@ type Sort = NonNullable<IngredientListQuery['sort']>;
 
 /** What a list is sorted by, which way, and how a row's value is read for the cursor. */
 const SORTS: Readonly<
-  Record<Sort, { by: string; descending: boolean; valueOf: (row: Ingredient) => string | number }>
+  Record<
+    Sort,
+    { by: string; kind: CursorKind; descending: boolean; valueOf: (row: Ingredient) => string | number }
+  >
 > = {
-  name: { by: NAME, descending: false, valueOf: (row) => row.name },
-  '-name': { by: NAME, descending: true, valueOf: (row) => row.name },
-  abv: { by: 'i.abv_fraction', descending: false, valueOf: (row) => row.abvFraction },
-  '-abv': { by: 'i.abv_fraction', descending: true, valueOf: (row) => row.abvFraction },
-  sugar: { by: 'i.sugar_g_per_l', descending: false, valueOf: (row) => row.sugarGPerL },
-  '-sugar': { by: 'i.sugar_g_per_l', descending: true, valueOf: (row) => row.sugarGPerL },
-  acid: { by: 'i.acid_citric_g_per_l', descending: false, valueOf: (row) => row.acidCitricGPerL },
-  '-acid': { by: 'i.acid_citric_g_per_l', descending: true, valueOf: (row) => row.acidCitricGPerL },
+  name: { by: NAME, kind: 'text', descending: false, valueOf: (row) => row.name },
+  '-name': { by: NAME, kind: 'text', descending: true, valueOf: (row) => row.name },
+  abv: { by: 'i.abv_fraction', kind: 'number', descending: false, valueOf: (row) => row.abvFraction },
+  '-abv': { by: 'i.abv_fraction', kind: 'number', descending: true, valueOf: (row) => row.abvFraction },
+  sugar: { by: 'i.sugar_g_per_l', kind: 'number', descending: false, valueOf: (row) => row.sugarGPerL },
+  '-sugar': { by: 'i.sugar_g_per_l', kind: 'number', descending: true, valueOf: (row) => row.sugarGPerL },
+  acid: {
+    by: 'i.acid_citric_g_per_l',
+    kind: 'number',
+    descending: false,
+    valueOf: (row) => row.acidCitricGPerL,
+  },
+  '-acid': {
+    by: 'i.acid_citric_g_per_l',
+    kind: 'number',
+    descending: true,
+    valueOf: (row) => row.acidCitricGPerL,
+  },
   '-updated': {
     by: "date_trunc('milliseconds', i.updated_at)",
+    kind: 'time',
     descending: true,
     valueOf: (row) => row.updatedAt.toISOString(),
   },
@@ -43,12 +57,12 @@ export async function listIngredients(
   { teamId, query }: { teamId: string; query: IngredientListQuery },
 ): Promise<Page<Ingredient>> {
   const { sort = 'name', limit = PAGE_LIMIT.default, retired = 'no' } = query;
-  const { by, descending, valueOf } = SORTS[sort];
+  const { by, kind, descending, valueOf } = SORTS[sort];
   const builder = em.createQueryBuilder(Ingredient, 'i').where({ team: teamId });
   if (retired !== 'all') builder.andWhere({ retiredAt: retired === 'only' ? { $ne: null } : null });
   if (query.category !== undefined) builder.andWhere({ category: query.category });
   if (query.search?.trim()) builder.andWhere('lower(i.name) like ?', [containsPattern(query.search)]);
-  const cursor = decodeCursor(query.cursor, sort);
+  const cursor = decodeCursor(query.cursor, sort, kind);
   if (cursor !== null)
     builder.andWhere(`(${by}, i.id) ${descending ? '<' : '>'} (?, ?)`, [cursor.value, cursor.id]);
   const direction = descending ? 'desc' : 'asc';

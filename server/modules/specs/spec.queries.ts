@@ -3,7 +3,7 @@ import { type EntityManager, LockMode, raw } from '@mikro-orm/postgresql';
 import { PAGE_LIMIT, type Page } from '#shared/contracts/common.ts';
 import type { SpecListQuery } from '#shared/contracts/spec.ts';
 
-import { containsPattern, decodeCursor, encodeCursor } from '../../http/cursor.ts';
+import { type CursorKind, containsPattern, decodeCursor, encodeCursor } from '../../http/cursor.ts';
 import { problems } from '../../http/problems.ts';
 import { Spec } from './spec.entity.ts';
 import type { Sibling } from './spec.mapper.ts';
@@ -18,13 +18,18 @@ const ABV = 'coalesce(s.abv_fraction, -1)';
 
 /** What a list is sorted by, which way, and how a row's value is read for the cursor. */
 const SORTS: Readonly<
-  Record<Sort, { by: string; descending: boolean; valueOf: (row: Spec) => string | number }>
+  Record<Sort, { by: string; kind: CursorKind; descending: boolean; valueOf: (row: Spec) => string | number }>
 > = {
-  '-updated': { by: 's.updated_at', descending: true, valueOf: (row) => row.updatedAt.toISOString() },
-  name: { by: NAME, descending: false, valueOf: (row) => row.name },
-  '-name': { by: NAME, descending: true, valueOf: (row) => row.name },
-  abv: { by: ABV, descending: false, valueOf: (row) => row.abvFraction ?? -1 },
-  '-abv': { by: ABV, descending: true, valueOf: (row) => row.abvFraction ?? -1 },
+  '-updated': {
+    by: 's.updated_at',
+    kind: 'time',
+    descending: true,
+    valueOf: (row) => row.updatedAt.toISOString(),
+  },
+  name: { by: NAME, kind: 'text', descending: false, valueOf: (row) => row.name },
+  '-name': { by: NAME, kind: 'text', descending: true, valueOf: (row) => row.name },
+  abv: { by: ABV, kind: 'number', descending: false, valueOf: (row) => row.abvFraction ?? -1 },
+  '-abv': { by: ABV, kind: 'number', descending: true, valueOf: (row) => row.abvFraction ?? -1 },
 };
 
 /** Columns a list shows; drafts stay in the database. */
@@ -55,7 +60,7 @@ export async function listSpecs(
   { teamId, query }: { teamId: string; query: SpecListQuery },
 ): Promise<Page<Spec>> {
   const { sort = '-updated', limit = PAGE_LIMIT.default, retired = 'no' } = query;
-  const { by, descending, valueOf } = SORTS[sort];
+  const { by, kind, descending, valueOf } = SORTS[sort];
   const builder = em
     .createQueryBuilder(Spec, 's')
     .select(SUMMARY_FIELDS.filter((field) => !field.startsWith('updatedBy')) as never)
@@ -67,7 +72,7 @@ export async function listSpecs(
     const searched = "lower(s.name || ' ' || coalesce(s.variant_name, '')) like ?";
     builder.andWhere(searched, [containsPattern(query.search)]);
   }
-  const cursor = decodeCursor(query.cursor, sort);
+  const cursor = decodeCursor(query.cursor, sort, kind);
   if (cursor !== null)
     builder.andWhere(`(${by}, s.id) ${descending ? '<' : '>'} (?, ?)`, [cursor.value, cursor.id]);
   const direction = descending ? 'desc' : 'asc';
