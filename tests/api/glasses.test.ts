@@ -33,7 +33,7 @@ const history = (id: string) => historyOf({ team, at: `/teams/${team.id}` }, id)
 describe('adding a glass', () => {
   // Volumes of solids from any geometry book: cylinder π r² h, cone π r² h / 3, frustum π h (R² + R r + r²) / 3.
   it.each([
-    ['a cylinder', points([0, 30], [100, 30]), (Math.PI * 9 * 10) as number],
+    ['a cylinder', points([0, 30], [100, 30]), Math.PI * 9 * 10],
     ['a cone', points([0, 0], [60, 50]), (Math.PI * 25 * 6) / 3],
     ['a frustum', points([0, 20], [80, 40]), (Math.PI * 8 * (16 + 8 + 4)) / 3],
     ['a cone on a cylinder', points([0, 0], [30, 30], [80, 30]), (Math.PI * 9 * 3) / 3 + Math.PI * 9 * 5],

@@ -111,6 +111,7 @@ export async function putDraft(
   context: ActingContext,
   { specId, draft, ifMatch }: { specId: string; draft: DraftBody; ifMatch: number },
 ): Promise<SpecResource> {
+  refuseRepeatedLines(draft);
   await refuseForeignIds(context, draft);
   return changeDraft(context, { specId, ifMatch }, (spec) => {
     spec.draft = draft;
@@ -194,6 +195,18 @@ async function staleSpec(inside: ActingContext, spec: Spec, revision: number) {
 export function refuseRetired(spec: Spec): void {
   if (spec.retiredAt == null) return;
   throw problems.notAllowedInState(`${titleOf(spec)} is retired. Bring it back before changing it.`);
+}
+
+/** A line's id tells it from the others, in figures, in comparison and on the page. */
+function refuseRepeatedLines({ lines }: DraftBody): void {
+  const ids = lines.map(({ id }) => id.toLowerCase());
+  const errors = ids.flatMap((id, index) => {
+    const first = ids.indexOf(id);
+    if (first === index) return [];
+    const detail = `Line ${index + 1} has the same id as line ${first + 1}.`;
+    return [{ pointer: `#/lines/${index}/id`, code: 'twice', detail }];
+  });
+  if (errors.length > 0) throw problems.invalidFields(errors);
 }
 
 /** Ingredients and the glass of a draft must be the team's own; another team's are unknown here. */

@@ -1,6 +1,7 @@
 import { type EntityManager, LockMode, raw } from '@mikro-orm/postgresql';
 
 import { problems } from '../../http/problems.ts';
+import { isUuid } from '../../http/uuid.ts';
 import { SpecVersion, TastingNote } from './spec.entity.ts';
 
 /** Versions of one spec in a list; older ones are still there by their id. */
@@ -52,7 +53,7 @@ export async function loadVersions(
   em: EntityManager,
   { teamId, ids }: { teamId: string; ids: readonly string[] },
 ): Promise<SpecVersion[]> {
-  const where = { team: teamId, id: { $in: [...ids] } };
+  const where = { team: teamId, id: { $in: ids.filter(isUuid) } };
   const found = await em.find(SpecVersion, where, { populate: PEOPLE_AND_PARENT, limit: ids.length });
   const byId = new Map(found.map((version) => [version.id, version]));
   return ids.map((id) => {
