@@ -1,6 +1,6 @@
 import type { ComparedFigure, FigureDifference } from '../specs/figure-differences.ts';
 import { ML_PER_FLUID_OUNCE } from '../units/measure-amount.ts';
-import { NO_NUMBER, UNIT_SPACE, formatNumber, formatSigned } from './format-number.ts';
+import { MINUS, NO_NUMBER, UNIT_SPACE, formatNumber, formatSigned } from './format-number.ts';
 import {
   FAHRENHEIT_AT_ZERO_C,
   FAHRENHEIT_PER_CELSIUS,
@@ -114,4 +114,22 @@ export function formatFigureDifference(
 export function shownStep(input: { readonly figure: ComparedFigure; readonly value: number }): number {
   const { quantity, scale } = showingOf({ figure: input.figure, ...METRIC_UNITS });
   return 10 ** -decimalsOf({ quantity, value: input.value * scale }) / scale;
+}
+
+/** Digits beyond which only the arithmetic of the machine speaks. */
+const FULL_DIGITS = 8;
+
+/** A number with all the digits that were worked out, for those who ask: `158.93127`. */
+export function formatFull(input: { readonly value: number; readonly unit: string }): string {
+  const number = String(Number(input.value.toPrecision(FULL_DIGITS))).replace('-', MINUS);
+  return input.unit === '' ? number : `${number}${UNIT_SPACE}${input.unit}`;
+}
+
+/** One compared figure with all its digits, in the unit it is shown in; `–` where there is none. */
+export function formatFullFigure(
+  input: { readonly figure: ComparedFigure; readonly value: number | null } & ShownUnits,
+): string {
+  if (input.value === null) return NO_NUMBER;
+  const { scale, offset, unit } = showingOf(input);
+  return formatFull({ value: input.value * scale + offset, unit });
 }

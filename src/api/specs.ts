@@ -1,5 +1,6 @@
 import type {
   Branch,
+  DraftBody,
   DraftFromVersion,
   Spec,
   SpecCreate,
@@ -7,6 +8,7 @@ import type {
   SpecPage,
   SpecUpdate,
 } from '#shared/contracts/spec.ts';
+import type { Version, VersionCreate } from '#shared/contracts/version.ts';
 import { request } from './http.ts';
 
 function specsPath(teamId: string): string {
@@ -54,5 +56,25 @@ export function startDraftFromVersion(
   body: DraftFromVersion,
 ): Promise<Spec> {
   const path = `${specsPath(teamId)}/${based.id}/draft/from-version`;
+  return request({ method: 'POST', path, body, ifMatch: based.draftRevision });
+}
+
+/** Saves the working draft; a stale one is refused with the spec as it stands. */
+export function saveDraft(
+  teamId: string,
+  based: Pick<Spec, 'id' | 'draftRevision'>,
+  draft: DraftBody,
+): Promise<Spec> {
+  const path = `${specsPath(teamId)}/${based.id}/draft`;
+  return request({ method: 'PUT', path, body: draft, ifMatch: based.draftRevision });
+}
+
+/** Saves the working draft as the next version. */
+export function saveVersion(
+  teamId: string,
+  based: Pick<Spec, 'id' | 'draftRevision'>,
+  body: VersionCreate,
+): Promise<Version> {
+  const path = `${specsPath(teamId)}/${based.id}/versions`;
   return request({ method: 'POST', path, body, ifMatch: based.draftRevision });
 }
