@@ -1,4 +1,4 @@
-import { afterAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 
 import { TEST_PASSWORD, type TestApp, startTestApp } from '#tests/support/app.ts';
 import type { Answer } from '#tests/support/client.ts';
@@ -6,9 +6,11 @@ import type { Answer } from '#tests/support/client.ts';
 /** Two servers behind a balancer, on one database. */
 let first: TestApp;
 let second: TestApp;
+beforeAll(async () => {
+  first = await startTestApp({ config: { rateLimitFactor: 1 } });
+  second = await startTestApp({ databaseUrl: first.databaseUrl, config: { rateLimitFactor: 1 } });
+});
 beforeEach(async () => {
-  first ??= await startTestApp({ config: { rateLimitFactor: 1 } });
-  second ??= await startTestApp({ databaseUrl: first.databaseUrl, config: { rateLimitFactor: 1 } });
   await first.orm.em.getConnection().execute('delete from rate_limit_window');
 });
 afterAll(async () => {

@@ -1,4 +1,5 @@
 import { spawn } from 'node:child_process';
+import { Socket } from 'node:net';
 import { fileURLToPath } from 'node:url';
 
 import type { Order } from './guard.mjs';
@@ -18,10 +19,11 @@ export function startGuard(): Guard {
   const ended = new Promise<void>((resolve) => child.once('close', () => resolve()));
   // Neither the process nor the pipe to it keeps this one alive.
   child.unref();
-  if ('unref' in child.stdin && typeof child.stdin.unref === 'function') child.stdin.unref();
+  if (child.stdin instanceof Socket) child.stdin.unref();
   return {
     order: (order) => void child.stdin.write(`${JSON.stringify(order)}\n`),
     finish: async () => {
+      child.ref();
       child.stdin.end();
       await ended;
     },
