@@ -1,4 +1,4 @@
-import { type EntityManager, LockMode, raw } from '@mikro-orm/postgresql';
+import { type EntityManager, LockMode } from '@mikro-orm/postgresql';
 
 import { PAGE_LIMIT, type Page } from '#shared/contracts/common.ts';
 import type { SpecListQuery } from '#shared/contracts/spec.ts';
@@ -6,7 +6,7 @@ import type { SpecListQuery } from '#shared/contracts/spec.ts';
 import { type CursorKind, containsPattern, decodeCursor, encodeCursor } from '../../http/cursor.ts';
 import { problems } from '../../http/problems.ts';
 import { Spec } from './spec.entity.ts';
-import type { Sibling } from './spec.mapper.ts';
+import type { Sibling, SpecRow } from './spec.mapper.ts';
 
 /** A family with more variants than this is a back bar, not a drink. */
 const SIBLING_LIMIT = 100;
@@ -18,71 +18,79 @@ const ABV = 'coalesce(s.abv_fraction, -1)';
 
 /** What a list is sorted by, which way, and how a row's value is read for the cursor. */
 const SORTS: Readonly<
-  Record<Sort, { by: string; kind: CursorKind; descending: boolean; valueOf: (row: Spec) => string | number }>
+  Record<
+    Sort,
+    { by: string; kind: CursorKind; descending: boolean; valueOf: (row: SpecRow) => string | number }
+  >
 > = {
   '-updated': {
     by: 's.updated_at',
     kind: 'time',
     descending: true,
-    valueOf: (row) => row.updatedAt.toISOString(),
+    valueOf: (row) => new Date(row.updated_at_ms).toISOString(),
   },
   name: { by: NAME, kind: 'text', descending: false, valueOf: (row) => row.name },
   '-name': { by: NAME, kind: 'text', descending: true, valueOf: (row) => row.name },
-  abv: { by: ABV, kind: 'number', descending: false, valueOf: (row) => row.abvFraction ?? -1 },
-  '-abv': { by: ABV, kind: 'number', descending: true, valueOf: (row) => row.abvFraction ?? -1 },
+  abv: { by: ABV, kind: 'number', descending: false, valueOf: (row) => row.abv_fraction ?? -1 },
+  '-abv': { by: ABV, kind: 'number', descending: true, valueOf: (row) => row.abv_fraction ?? -1 },
 };
 
 /** Columns a list shows; drafts stay in the database. */
-const SUMMARY_FIELDS = [
-  'id',
-  'revision',
-  'familyId',
-  'name',
-  'variantName',
-  'latestVersionId',
-  'latestNumber',
-  'latestState',
-  'lockedVersionId',
-  'lockedNumber',
-  'finalMl',
-  'abvFraction',
-  'sugarGPerL',
-  'acidCitricGPerL',
-  'updatedAt',
-  'updatedBy.id',
-  'updatedBy.name',
-  'retiredAt',
-] as const;
+const SUMMARY_COLUMNS = `s.id, s.revision, s.family_id, s.name, s.variant_name, s.latest_version_id, s.latest_number,
+  s.latest_state, s.locked_version_id, s.locked_number, s.final_ml, s.abv_fraction, s.sugar_g_per_l,
+  s.acid_citric_g_per_l, trunc(extract(epoch from s.updated_at) * 1000)::float8 as updated_at_ms,
+  trunc(extract(epoch from s.retired_at) * 1000)::float8 as retired_at_ms, u.id as updated_by_id, u.name as updated_by_name`;
 
-/** A page of the team's specs, found, filtered and sorted by the database. */
+const RETIRED: Readonly<Record<NonNullable<SpecListQuery['retired']>, string>> = {
+  no: 'and s.retired_at is null',
+  only: 'and s.retired_at is not null',
+  all: '',
+};
+
+/**
+ * A page of the team's specs, found, filtered and sorted by the database. The rows are read as they are: making entities of them
+ * takes several times as long as the statement, and a list changes none.
+ */
 export async function listSpecs(
   em: EntityManager,
   { teamId, query }: { teamId: string; query: SpecListQuery },
-): Promise<Page<Spec>> {
-  const { sort = '-updated', limit = PAGE_LIMIT.default, retired = 'no' } = query;
-  const { by, kind, descending, valueOf } = SORTS[sort];
-  const builder = em
-    .createQueryBuilder(Spec, 's')
-    .select(SUMMARY_FIELDS.filter((field) => !field.startsWith('updatedBy')) as never)
-    .leftJoinAndSelect('s.updatedBy', 'u', {}, ['id', 'name'])
-    .where({ team: teamId });
-  if (retired !== 'all') builder.andWhere({ retiredAt: retired === 'only' ? { $ne: null } : null });
-  if (query.state !== undefined) builder.andWhere({ latestState: query.state });
-  if (query.search?.trim()) {
-    const searched = "lower(s.name || ' ' || coalesce(s.variant_name, '')) like ?";
-    builder.andWhere(searched, [containsPattern(query.search)]);
-  }
-  const cursor = decodeCursor(query.cursor, sort, kind);
-  if (cursor !== null)
-    builder.andWhere(`(${by}, s.id) ${descending ? '<' : '>'} (?, ?)`, [cursor.value, cursor.id]);
+): Promise<Page<SpecRow>> {
+  const { sort = '-updated', limit = PAGE_LIMIT.default } = query;
+  const { by, descending, valueOf } = SORTS[sort];
+  const { conditions, values } = conditionsOf(query, sort);
   const direction = descending ? 'desc' : 'asc';
-  const rows = await builder
-    .orderBy([{ [raw(by)]: direction }, { id: direction }])
-    .limit(limit + 1)
-    .getResultList();
+  const rows = await em.execute<SpecRow[]>(
+    `select ${SUMMARY_COLUMNS} from spec s left join app_user u on u.id = s.updated_by_id
+     where s.team_id = ? ${conditions.join(' ')} order by ${by} ${direction}, s.id ${direction} limit ?`,
+    [teamId, ...values, limit + 1],
+  );
   const items = rows.slice(0, limit);
   const last = rows.length > limit ? items.at(-1) : undefined;
   return { items, nextCursor: last ? encodeCursor({ sort, value: valueOf(last), id: last.id }) : null };
+}
+
+/** What a query leaves of the team's specs: fixed words of SQL, with a place for each value. */
+function conditionsOf(
+  query: SpecListQuery,
+  sort: Sort,
+): { conditions: string[]; values: (string | number)[] } {
+  const { by, kind, descending } = SORTS[sort];
+  const conditions = [RETIRED[query.retired ?? 'no']];
+  const values: (string | number)[] = [];
+  if (query.state !== undefined) {
+    conditions.push('and s.latest_state = ?');
+    values.push(query.state);
+  }
+  if (query.search?.trim()) {
+    conditions.push("and lower(s.name || ' ' || coalesce(s.variant_name, '')) like ?");
+    values.push(containsPattern(query.search));
+  }
+  const cursor = decodeCursor(query.cursor, sort, kind);
+  if (cursor !== null) {
+    conditions.push(`and (${by}, s.id) ${descending ? '<' : '>'} (?, ?)`);
+    values.push(cursor.value, cursor.id);
+  }
+  return { conditions, values };
 }
 
 interface OneSpec {

@@ -14,7 +14,7 @@ import {
 import { VersionCreateSchema, VersionListSchema, VersionSchema } from '#shared/contracts/version.ts';
 
 import { type AnyRoute, inTeam, route } from '../../http/route.ts';
-import { toSpecSummary } from './spec.mapper.ts';
+import { summaryOfRow } from './spec.mapper.ts';
 import { listSpecs, loadSpec } from './spec.queries.ts';
 import {
   branchSpec,
@@ -44,7 +44,7 @@ export const specOnlyRoutes: AnyRoute[] = [
     response: { status: 200, schema: SpecPageSchema },
     handler: async ({ em, teamId }, { query }) => {
       const { items, nextCursor } = await listSpecs(em, { teamId, query });
-      return { body: { items: items.map(toSpecSummary), nextCursor } };
+      return { body: { items: items.map(summaryOfRow), nextCursor } };
     },
   }),
   route({
