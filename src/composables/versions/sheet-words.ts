@@ -1,6 +1,6 @@
 import type { DilutionChoice } from '#shared/contracts/spec.ts';
-import type { Figures, Version } from '#shared/contracts/version.ts';
-import { formatMass, formatVolume, type VolumeUnit } from '#shared/text/format-quantity.ts';
+import type { Version } from '#shared/contracts/version.ts';
+import { formatMass, type VolumeUnit } from '#shared/text/format-quantity.ts';
 import { showAmountIn } from '#shared/text/show-amount.ts';
 
 /** One line as it is read at the bar. */
@@ -67,14 +67,6 @@ export function dilutionWords(dilution: DilutionChoice): string {
     case 'published':
       return 'published curve of the method';
   }
-}
-
-/** Room left in the glass, or what runs over; null without a glass. */
-export function headroomWords(figures: Figures, volumeUnit: VolumeUnit): string | null {
-  const { washLine } = figures;
-  if (washLine === null) return null;
-  const volume = formatVolume({ volumeMl: Math.abs(washLine.headroomMl), unit: volumeUnit });
-  return washLine.headroomMl < 0 ? `${volume} over the brim` : `${volume} below the brim`;
 }
 
 function glassIceWords(ice: Version['body']['glassIce']): string {

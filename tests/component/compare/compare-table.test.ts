@@ -49,7 +49,7 @@ describe('the table of differences', () => {
     const lime = allByRole(page, 'row')
       .map(textOf)
       .find((row) => row.startsWith('Lime juice'));
-    expect(lime).toBe('Lime juice ≠ differs 22.5 ml 20 ml ▼ 2.5 ml less – not in this version − left out');
+    expect(lime).toBe('Lime juice ≠ differs 22.5 ml 20 ml ▼ 2.5 ml less – none − left out');
   });
 
   it('does not mark a row that is the same in every version', () => {
