@@ -166,9 +166,10 @@ const teamRoutes: RouteRecordRaw = {
   ],
 };
 
+/** The start page stands before the pages with no path of their own, which would otherwise answer to `/` too. */
 export const routes: RouteRecordRaw[] = [
-  publicRoutes,
   personRoutes,
+  publicRoutes,
   teamRoutes,
   {
     path: '/:path(.*)*',

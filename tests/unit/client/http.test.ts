@@ -100,6 +100,12 @@ describe('no answer', () => {
       ),
     );
     expect(await failureOf(request({ method: 'GET', path: '/x' }))).toBeInstanceOf(NoAnswerError);
+    vi.stubGlobal('fetch', () =>
+      Promise.resolve(
+        new Response('{"message":"no"}', { status: 503, headers: { 'content-type': 'application/json' } }),
+      ),
+    );
+    expect(await failureOf(request({ method: 'GET', path: '/x' }))).toBeInstanceOf(NoAnswerError);
     vi.stubGlobal('fetch', () => Promise.resolve(new Response('{"id":', { status: 200 })));
     expect(await failureOf(request({ method: 'GET', path: '/x' }))).toBeInstanceOf(NoAnswerError);
   });
