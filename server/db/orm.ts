@@ -60,8 +60,18 @@ export function ormConfig({ databaseUrl, log, poolMax = 10 }: OrmOptions): Optio
   };
 }
 
-/** Brings the schema up to date: every missing migration, each in a transaction. */
-export async function migrate(orm: MikroORM): Promise<string[]> {
-  const done = await orm.getMigrator().up();
-  return done.map((migration) => migration.name);
+/** Any number, so long as every server asks for the same one. */
+const MIGRATION_LOCK = 20_261_201;
+
+/**
+ * Brings the schema up to date: every missing migration or, when one fails, none. Servers that start at the same moment
+ * wait for each other, and the later ones find nothing to do.
+ */
+export function migrate(orm: MikroORM): Promise<string[]> {
+  return orm.em.fork().transactional(async (em) => {
+    const transaction: unknown = em.getTransactionContext();
+    await em.getConnection().execute('select pg_advisory_xact_lock(?)', [MIGRATION_LOCK], 'all', transaction);
+    const done = await orm.getMigrator().up({ transaction });
+    return done.map((migration) => migration.name);
+  });
 }

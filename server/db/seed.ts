@@ -25,27 +25,39 @@ import { createTeam } from '../modules/teams/index.ts';
 import { Membership, type Team } from '../modules/teams/team.entity.ts';
 import { DEMO_PEOPLE, type DemoPersonKey } from './seed/people.ts';
 import { DEMO_PACKS, DEMO_PREPS } from './seed/preps.ts';
-import { DEMO_SERVES, type DemoServe, type DemoVersion } from './seed/serves.ts';
+import { DEMO_SERVES, type DemoServe, type DemoVersion, KIOSK_SERVES } from './seed/serves.ts';
 
 /** Who can sign in to the demo, one per role. */
 export const DEMO_SIGN_INS = Object.values(DEMO_PEOPLE);
 
 const HOUR_MS = 3_600_000;
 const STORY_HOURS = 24 * 20;
+const STEP_HOURS = 2;
 
 export async function isEmpty(orm: MikroORM): Promise<boolean> {
   return (await orm.em.fork().count(User)) === 0;
 }
 
-/** Loads the invented team of the Gannet Room, and a second team that its developer also belongs to. All or nothing. */
+/** Any number, so long as every server asks for the same one. */
+const SEED_LOCK = 20_261_202;
+
+/**
+ * Loads the invented team of the Gannet Room, and a second team that its developer also belongs to: all or nothing, and nothing
+ * when there is anybody already. Servers that start together wait for each other, and one of them loads it.
+ */
 export async function seedDemo(orm: MikroORM): Promise<void> {
   await orm.em.fork().transactional(async (transaction) => {
     const em = transaction;
+    await em.execute('select pg_advisory_xact_lock(?)', [SEED_LOCK]);
+    if ((await em.count(User)) > 0) return;
+    const start = new Date(Date.now() - STORY_HOURS * HOUR_MS);
     const people = await addPeople(em);
-    const team = await addTeam(em, people);
-    const story = new DemoStory(em, team, people);
+    const { gannetRoom, kiosk } = await addTeams(em, { people, start });
+    const story = new DemoStory(em, { team: gannetRoom, people, start });
     await story.stockShelf();
     for (const serve of DEMO_SERVES) await story.tell(serve);
+    const sideStory = new DemoStory(em, { team: kiosk, people, start });
+    for (const serve of KIOSK_SERVES) await sideStory.tell(serve);
   });
 }
 
@@ -62,17 +74,18 @@ async function addPeople(em: EntityManager): Promise<People> {
   return Object.fromEntries(entries) as People;
 }
 
-async function addTeam(em: EntityManager, people: People): Promise<Team> {
-  const team = createTeam(em, { name: 'The Gannet Room', creator: people.manager });
-  em.assign(team, { country: 'GB', currency: 'GBP' });
+async function addTeams(em: EntityManager, { people, start }: { people: People; start: Date }) {
+  const settings = { country: 'GB', currency: 'GBP' } as const;
+  const gannetRoom = createTeam(em, { name: 'The Gannet Room', creator: people.manager, at: start });
+  em.assign(gannetRoom, settings);
   for (const [key, { roles }] of Object.entries(DEMO_PEOPLE)) {
     const user = people[key as DemoPersonKey];
-    if (user !== people.manager) em.create(Membership, { team, user, roles: [...roles] });
+    if (user !== people.manager) em.create(Membership, { team: gannetRoom, user, roles: [...roles] });
   }
-  const second = createTeam(em, { name: 'Ferry Stage Kiosk', creator: people.developer });
-  em.assign(second, { country: 'GB', currency: 'GBP' });
+  const kiosk = createTeam(em, { name: 'Ferry Stage Kiosk', creator: people.developer, at: start });
+  em.assign(kiosk, settings);
   await em.flush();
-  return team;
+  return { gannetRoom, kiosk };
 }
 
 /** Tells what the team did, step by step, through the same use cases as the API, on a clock of the last weeks. */
@@ -80,13 +93,14 @@ class DemoStory {
   readonly #em: EntityManager;
   readonly #team: Team;
   readonly #people: People;
-  readonly #start = Date.now() - STORY_HOURS * HOUR_MS;
+  readonly #start: Date;
   #hours = 0;
 
-  constructor(em: EntityManager, team: Team, people: People) {
+  constructor(em: EntityManager, { team, people, start }: { team: Team; people: People; start: Date }) {
     this.#em = em;
     this.#team = team;
     this.#people = people;
+    this.#start = start;
   }
 
   async stockShelf(): Promise<void> {
@@ -141,22 +155,17 @@ class DemoStory {
   async #review(name: string, { sizeMl, price }: { sizeMl: number; price: string }): Promise<void> {
     const ingredient = await this.#ingredient(name);
     ingredient.allergens = { ...ingredient.allergens, reviewed: true };
-    ingredient.packs = [
-      { size: sizeMl, sizeUnit: 'ml', price, pricedOn: this.#now().toISOString().slice(0, 10) },
-    ];
+    const pricedOn = this.#start.toISOString().slice(0, 10);
+    ingredient.packs = [{ size: sizeMl, sizeUnit: 'ml', price, pricedOn }];
   }
 
   /** The context of one of the team's people, two hours after the step before. */
   #as(key: DemoPersonKey): ActingContext {
-    this.#hours = Math.min(this.#hours + 2, STORY_HOURS);
     const { id, email, name } = this.#people[key];
     const { roles } = DEMO_PEOPLE[key];
-    const now = this.#now();
-    return { em: this.#em, teamId: this.#team.id, person: { id, email, name }, roles, now: () => now };
-  }
-
-  #now(): Date {
-    return new Date(this.#start + this.#hours * HOUR_MS);
+    this.#hours = Math.min(this.#hours + STEP_HOURS, STORY_HOURS);
+    const at = new Date(this.#start.getTime() + this.#hours * HOUR_MS);
+    return { em: this.#em, teamId: this.#team.id, person: { id, email, name }, roles, now: () => at };
   }
 }
 

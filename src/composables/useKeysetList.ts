@@ -29,6 +29,7 @@ export function useKeysetList<Item>(
     const own = new AbortController();
     controller = own;
     status.value = 'loading';
+    failure.value = null;
     try {
       const page = await loadPage(cursor, own.signal);
       if (own.signal.aborted) return;

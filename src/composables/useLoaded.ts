@@ -6,7 +6,7 @@ export interface Loaded<Data> {
   /** What was loaded last; null before the first answer. It stays while it is loaded again. */
   data: ShallowRef<Data | null>;
   status: Ref<LoadStatus>;
-  /** Why the last load failed. */
+  /** Why the last load failed; null when it did not. */
   failure: ShallowRef<unknown>;
   reload: () => Promise<void>;
 }
@@ -23,6 +23,7 @@ export function useLoaded<Data>(load: (signal: AbortSignal) => Promise<Data>): L
     const own = new AbortController();
     controller = own;
     status.value = 'loading';
+    failure.value = null;
     try {
       const answer = await load(own.signal);
       if (own.signal.aborted) return;

@@ -168,6 +168,36 @@ export const DEMO_SERVES: readonly DemoServe[] = [
           },
         ],
       },
+      {
+        why: 'Pineapple core syrup to round the vinegar, less shrub',
+        lines: [
+          ['40 ml', 'Gin (London-dry type)'],
+          ['20 ml', 'Rhubarb trim shrub'],
+          ['10 ml', 'Pineapple core syrup'],
+          ['90 ml', 'Soda water', 'top'],
+        ],
+        notes: [
+          { by: 'bartender', note: note([6, 5, 1, 4, 6, 6], 'Rounder, but the rhubarb has gone quiet.') },
+          { by: 'manager', note: note([6, 5, 1, 4, 6, 7], 'I would order a second one.') },
+        ],
+      },
+      {
+        why: 'Rhubarb forward again: shrub up, pineapple down, a little salt',
+        lines: [
+          ['40 ml', 'Gin (London-dry type)'],
+          ['25 ml', 'Rhubarb trim shrub'],
+          ['5 ml', 'Pineapple core syrup'],
+          ['2 drops', 'Citrus-leaf saline'],
+          ['90 ml', 'Soda water', 'top'],
+        ],
+        notes: [
+          {
+            by: 'trainer',
+            note: note([5, 6, 1, 4, 6, 8], 'Salt makes the fruit. Easy to teach: one jigger, one top.'),
+          },
+        ],
+        state: 'on trial',
+      },
     ],
   },
   {
@@ -190,7 +220,62 @@ export const DEMO_SERVES: readonly DemoServe[] = [
           ['20 ml', 'Whey and lemon-peel cordial'],
           ['70 ml', 'Tonic water', 'top'],
         ],
+        notes: [
+          {
+            by: 'menuWriter',
+            note: note([8, 4, 4, 2, 6, 6], 'Pretty, but the tonic brings sugar of its own.'),
+          },
+        ],
+      },
+      {
+        why: 'Less cordial and a little lemon, since tonic is sweet already',
+        lines: [
+          ['45 ml', 'Dry vermouth'],
+          ['15 ml', 'Whey and lemon-peel cordial'],
+          ['7.5 ml', 'Lemon juice, fresh'],
+          ['70 ml', 'Tonic water', 'top'],
+        ],
+        notes: [
+          { by: 'trainer', note: note([6, 6, 4, 2, 6, 8], 'Grown up. Nobody asked where the spirit was.') },
+          { by: 'bartender', note: note([6, 6, 4, 2, 6, 7], 'Say “milk” at the table: the whey is in it.') },
+        ],
         state: 'on trial',
+      },
+    ],
+  },
+];
+
+/** What the kiosk at the ferry stage is working on, all from the shelf. */
+export const KIOSK_SERVES: readonly DemoServe[] = [
+  {
+    name: 'Last Boat',
+    description: 'One for the queue: two pours and a top.',
+    glass: 'Highball',
+    making: {
+      method: 'build',
+      dilution: { kind: 'by hand', dilutionFraction: 0.15 },
+      ice: 'cubes',
+      glassIce: { kind: 'cubes', massG: 140 },
+      garnish: 'Lime wedge',
+      build: ['Build over fresh cubes.', 'Top with ginger beer.'],
+    },
+    versions: [
+      {
+        why: 'Aged rum, lime and ginger beer, as everybody knows it',
+        lines: [
+          ['45 ml', 'Aged rum'],
+          ['15 ml', 'Lime juice, fresh'],
+          ['100 ml', 'Ginger beer, soft', 'top'],
+        ],
+      },
+      {
+        why: 'Less lime, since the queue is cold and wants it round',
+        lines: [
+          ['45 ml', 'Aged rum'],
+          ['10 ml', 'Lime juice, fresh'],
+          ['100 ml', 'Ginger beer, soft', 'top'],
+        ],
+        notes: [{ by: 'developer', note: note([6, 5, 1, 5, 5, 7], 'Quick to pour and easy to like.') }],
       },
     ],
   },

@@ -134,8 +134,9 @@ async function refuseNamesake(
 }
 
 function recordIngredientEvent(
-  { em, teamId, person }: ActingContext,
+  { em, teamId, person, now }: ActingContext,
   { ingredient, action, summary }: { ingredient: Ingredient; action: string; summary: string },
 ): void {
-  recordEvent(em, { teamId, person, action, subjectType: 'ingredient', subjectId: ingredient.id, summary });
+  const subject = { subjectType: 'ingredient', subjectId: ingredient.id };
+  recordEvent(em, { teamId, person, action, ...subject, summary, at: now() });
 }

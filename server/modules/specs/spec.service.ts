@@ -231,8 +231,8 @@ async function refuseForeignIds({ em, teamId }: ActingContext, draft: DraftBody)
 }
 
 export function recordSpecEvent(
-  { em, teamId, person }: Pick<ActingContext, 'em' | 'teamId' | 'person'>,
+  { em, teamId, person, now }: Pick<ActingContext, 'em' | 'teamId' | 'person' | 'now'>,
   { spec, action, summary }: { spec: Pick<Spec, 'id'>; action: string; summary: string },
 ): void {
-  recordEvent(em, { teamId, person, action, subjectType: 'spec', subjectId: spec.id, summary });
+  recordEvent(em, { teamId, person, action, subjectType: 'spec', subjectId: spec.id, summary, at: now() });
 }

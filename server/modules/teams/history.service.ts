@@ -12,6 +12,8 @@ export interface EventToRecord {
   subjectId: string | null;
   /** What happened, in words that still make sense when the subject is gone. */
   summary: string;
+  /** When it happened; without it, the database's own clock says. */
+  at?: Date;
 }
 
 /** Adds to the team's history; written with the caller's flush, so that it stands or falls with the change itself. */
@@ -25,6 +27,7 @@ export function recordEvent(em: EntityManager, event: EventToRecord): void {
       subjectType: event.subjectType,
       subjectId: event.subjectId,
       summary: event.summary,
+      ...(event.at && { at: event.at }),
     }),
   );
 }

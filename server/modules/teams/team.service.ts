@@ -17,7 +17,7 @@ import { loadTeam } from './team.queries.ts';
 /** Adds a team with its creator as manager, the generic back bar and the common glasses; the caller flushes. */
 export function createTeam(
   em: EntityManager,
-  { name, creator }: { name: string; creator: Pick<SignedInPerson, 'id' | 'name'> },
+  { name, creator, at }: { name: string; creator: Pick<SignedInPerson, 'id' | 'name'>; at?: Date },
 ): Team {
   const team = em.create(Team, {
     id: randomUUID(),
@@ -25,6 +25,7 @@ export function createTeam(
     country: 'WHO',
     currency: 'EUR',
     houseMeasures: { ...DEFAULT_HOUSE_MEASURES },
+    ...(at && { createdAt: at }),
   });
   em.create(Membership, { team, user: creator.id, roles: ['manager'] });
   stockTeam(em, team.id);
@@ -36,6 +37,7 @@ export function createTeam(
     subjectType: 'team',
     subjectId: team.id,
     summary: `Made the team ${team.name}`,
+    ...(at && { at }),
   });
   return team;
 }

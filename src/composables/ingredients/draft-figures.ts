@@ -2,7 +2,7 @@ import { acidAsCitric } from '#shared/physics/acids.ts';
 import { computedDensityGPerMl, fitOfComposition } from '#shared/physics/contents.ts';
 import { formatDensity, formatGPerL } from '#shared/text/format-quantity.ts';
 import type { IngredientDraft } from './ingredient-draft.ts';
-import { compositionFromDraft } from './ingredient-write.ts';
+import { MISFIT_WORDS, compositionFromDraft } from './ingredient-write.ts';
 
 export interface DraftFigures {
   /** All acids together as citric; null while a field cannot be read. */
@@ -25,8 +25,6 @@ export function draftFigures(draft: IngredientDraft): DraftFigures {
     computedDensityWords: fitOfComposition(computed).ok
       ? formatDensity(computedDensityGPerMl(computed))
       : null,
-    misfitWords: isFitting
-      ? null
-      : 'So much alcohol, sugar and acid does not fit into one litre together. Check the values, or the density.',
+    misfitWords: isFitting ? null : MISFIT_WORDS,
   };
 }

@@ -1,6 +1,7 @@
 import type { IngredientWrite, Pack } from '#shared/contracts/ingredient.ts';
 import type { FieldError } from '#shared/contracts/problem.ts';
 import { ACID_KEYS, COMPOSITION_RANGES, type Composition } from '#shared/physics/composition.ts';
+import { fitOfComposition } from '#shared/physics/contents.ts';
 import { parseNumber } from '#shared/text/parse-number.ts';
 import { type IngredientDraft, type KnownQuantity, type PackDraft } from './ingredient-draft.ts';
 import { sugarGPerLFromEntry } from './sugar-entry.ts';
@@ -15,6 +16,10 @@ interface NumberField {
   min: number;
   max: number;
 }
+
+/** Said while typing, and again when the form is sent all the same. */
+export const MISFIT_WORDS =
+  'So much alcohol, sugar and acid does not fit into one litre together. Check the values, or the density.';
 
 const PRICE = /^\d{1,9}(\.\d{1,4})?$/;
 const MAX_PACK_SIZE = 1_000_000;
@@ -70,6 +75,9 @@ export function ingredientFromDraft(draft: IngredientDraft): IngredientWriteResu
     source: draft.source.trim(),
     note: draft.note.trim(),
   };
+  if (reader.errors.length === 0 && !fitOfComposition(body.composition).ok) {
+    reader.refuse('#/composition', MISFIT_WORDS);
+  }
   return reader.errors.length > 0 ? { ok: false, errors: reader.errors } : { ok: true, body };
 }
 

@@ -39,7 +39,7 @@ export function sugarGPerLFromEntry(entry: SugarEntry): SugarReading {
       : { ok: true, sugarGPerL: value };
   }
   const brix = brixFromEntry(entry);
-  return brix.ok ? withinRange(sugarGPerLFromBrix(brix.value)) : brix;
+  return brix.ok ? withinRange(roundedGPerL(sugarGPerLFromBrix(brix.value))) : brix;
 }
 
 /** The other ways to tell the same sugar; null while the entry cannot be read. */
@@ -77,6 +77,11 @@ function brixFromEntry(entry: SugarEntry): { ok: true; value: number } | { ok: f
   }
   const value = entry.kind === 'ratio by weight' ? brixFromRatioByMass(ratio) : brixFromRatioByVolume(ratio);
   return { ok: true, value };
+}
+
+/** The conversion is good to 0.05 %: more digits would only look like knowledge, and come back into the field. */
+function roundedGPerL(sugarGPerL: number): number {
+  return Number(formatTrimmed({ value: sugarGPerL, decimals: 1 }));
 }
 
 function withinRange(sugarGPerL: number): SugarReading {

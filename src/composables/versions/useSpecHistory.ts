@@ -35,7 +35,7 @@ export function useSpecHistory(teamId: string, specId: Readonly<Ref<string>>): S
     ]);
     return { spec, versions: list.items };
   });
-  const submission = useSubmission();
+  const submission = useSubmission(['#/name', '#/variantName', '#/description']);
   watch(specId, () => void loaded.reload(), { immediate: true });
   const spec = computed(() => loaded.data.value?.spec ?? null);
 

@@ -45,7 +45,10 @@ export function useVersionPicker(teamId: string): VersionPicker {
     specs: computed(() => found.data.value ?? []),
     openSpecId,
     versions: computed(() => (opened.status.value === 'ready' ? (opened.data.value ?? []) : [])),
-    isLoading: computed(() => found.status.value === 'loading' || opened.status.value === 'loading'),
+    isLoading: computed(
+      () =>
+        found.status.value === 'loading' || (openSpecId.value !== null && opened.status.value === 'loading'),
+    ),
     failure: computed(() => found.failure.value ?? opened.failure.value),
     start: found.reload,
     openSpec(specId) {

@@ -25,6 +25,7 @@ async function openDialog() {
       figures: [{ label: 'Final ABV', words: '17.2 %' }],
       allergens: { contains: ['eggs'], mayContain: [], notReviewed: ['House vermouth'] },
       warnings: ['The drink is 12 ml more than the glass holds.'],
+      replacedNumber: 2,
       signer: 'Menu writer',
       isSaving: false,
       failure: null,
@@ -46,6 +47,7 @@ describe('the lock dialog', () => {
       /Final ABV 17\.2 %/,
       /Contains eggs/,
       /Not reviewed House vermouth/,
+      /Version 2 is locked now\. Signing this one retires it\./,
       /The drink is 12 ml more than the glass holds\./,
     ]) {
       expect(words).toMatch(part);
