@@ -32,7 +32,7 @@ export const DEMO_SIGN_INS = Object.values(DEMO_PEOPLE);
 
 const HOUR_MS = 3_600_000;
 const STORY_HOURS = 24 * 20;
-const STEP_HOURS = 2;
+const STEP_HOURS = 9;
 
 export async function isEmpty(orm: MikroORM): Promise<boolean> {
   return (await orm.em.fork().count(User)) === 0;
@@ -85,6 +85,7 @@ async function addTeams(em: EntityManager, { people, start }: { people: People; 
   const kiosk = createTeam(em, { name: 'Ferry Stage Kiosk', creator: people.developer, at: start });
   em.assign(kiosk, settings);
   await em.flush();
+  em.clear();
   return { gannetRoom, kiosk };
 }
 
@@ -124,6 +125,7 @@ class DemoStory {
   /** Writes the draft, saves it, and adds what the team said and decided; the id of the version. */
   async #save(step: { specId: string; serve: DemoServe; version: DemoVersion }): Promise<string> {
     const { specId, serve, version } = step;
+    this.#em.clear();
     const draft = await this.#draftOf(serve, version);
     const present = await putDraftAnew(this.#as('developer'), { specId, draft });
     const saved = await saveVersion(this.#as('developer'), { specId, why: version.why, ifMatch: present });
@@ -159,7 +161,7 @@ class DemoStory {
     ingredient.packs = [{ size: sizeMl, sizeUnit: 'ml', price, pricedOn }];
   }
 
-  /** The context of one of the team's people, two hours after the step before. */
+  /** The context of one of the team's people, some hours after the step before. */
   #as(key: DemoPersonKey): ActingContext {
     const { id, email, name } = this.#people[key];
     const { roles } = DEMO_PEOPLE[key];
