@@ -1,4 +1,4 @@
-import { type Ref, computed, ref, shallowRef } from 'vue';
+import { type Ref, computed, ref, shallowRef, watch } from 'vue';
 
 import type { Ingredient, IngredientWrite } from '#shared/contracts/ingredient.ts';
 import { ApiProblem } from '#src/api/http.ts';
@@ -34,6 +34,17 @@ export function useIngredientForm(teamId: string): IngredientForm {
     draft.value = ingredient === null ? emptyIngredientDraft() : draftFromIngredient(ingredient);
     opened.value = JSON.stringify(draft.value);
   }
+
+  // Once something was wrong, each change is checked as it is made, so that a message goes when its cause does.
+  watch(
+    draft,
+    (now) => {
+      if (submission.errors.value.length === 0) return;
+      const read = ingredientFromDraft(now);
+      submission.refuse(read.ok ? [] : read.errors);
+    },
+    { deep: true },
+  );
 
   function send(body: IngredientWrite): Promise<Ingredient> {
     return base.value === null ? createIngredient(teamId, body) : updateIngredient(teamId, base.value, body);
