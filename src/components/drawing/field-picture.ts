@@ -54,6 +54,7 @@ export interface FieldPicture {
 
 const MARGIN_PX = { top: 24, right: 44, bottom: 40, left: 44 } as const;
 const MARK_RADIUS_PX = 7;
+const REFERENCE_RADIUS_PX = 4;
 const RAY_LABEL_OFFSET_PX = 6;
 const PRIORITY = { live: 4, ghost: 3, version: 2, reference: 1 } as const;
 /** About so many steps on an axis. */
@@ -158,14 +159,10 @@ function labelsOf(input: {
     const text = isActive ? name : label;
     return text === '' ? [] : [{ key, text, x, y, priority: isActive ? 5 : PRIORITY[kind] }];
   });
-  const obstacles = drawn
-    .filter((mark) => mark.kind !== 'reference')
-    .map(({ x, y }) => ({
-      x: x - MARK_RADIUS_PX,
-      y: y - MARK_RADIUS_PX,
-      width: 2 * MARK_RADIUS_PX,
-      height: 2 * MARK_RADIUS_PX,
-    }));
+  const obstacles = drawn.map(({ kind, x, y }) => {
+    const radius = kind === 'reference' ? REFERENCE_RADIUS_PX : MARK_RADIUS_PX;
+    return { x: x - radius, y: y - radius, width: 2 * radius, height: 2 * radius };
+  });
   return placeLabels({ labels, obstacles, bounds: plot });
 }
 

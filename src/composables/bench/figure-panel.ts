@@ -113,7 +113,7 @@ function volumeRows({ figures, units }: PanelInput): PanelRow[] {
   });
   return [
     row('sumOfPartsMl', 'lines added up', figures.sumOfPartsMl),
-    row('contractionMl', 'contraction', figures.contractionMl),
+    row('contractionMl', 'contraction in all', figures.contractionMl),
     row('meltWaterMl', 'melt water', figures.meltWaterMl),
     ...(figures.topMl > 0 ? [row('topMl', 'topped up', figures.topMl)] : []),
   ];

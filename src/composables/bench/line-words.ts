@@ -1,7 +1,7 @@
 /** What stands at the fields of a line. */
 import type { FieldError } from '#shared/contracts/problem.ts';
-import type { DraftLine } from '#shared/contracts/spec.ts';
-import type { EvaluatedLine } from '#shared/specs/evaluate-spec.ts';
+import type { DraftBody, DraftLine } from '#shared/contracts/spec.ts';
+import type { EvaluatedLine, SpecEvaluation } from '#shared/specs/evaluate-spec.ts';
 import { amountOfLine } from '#shared/specs/line-amount.ts';
 import type { VolumeUnit } from '#shared/text/format-quantity.ts';
 import { showAmountIn } from '#shared/text/show-amount.ts';
@@ -41,4 +41,18 @@ export function amountInOtherUnit(input: { line: DraftLine; volumeUnit: VolumeUn
   if (!read.ok) return '';
   const shown = showAmountIn(read.amount, input.volumeUnit);
   return shown === formatAmount(read.amount) ? '' : shown;
+}
+
+/** Lines that are begun and not in the figures, by name where they have one. */
+export function linesLeftOut(input: {
+  draft: DraftBody;
+  evaluation: SpecEvaluation;
+  nameOf: (ingredientId: string) => string | null;
+}): string[] {
+  return input.draft.lines.flatMap((line, index) => {
+    const evaluated = input.evaluation.lines[index];
+    if (evaluated === undefined || evaluated.ok || evaluated.reason === 'empty') return [];
+    const name = line.ingredientId === null ? null : input.nameOf(line.ingredientId);
+    return [name ?? `line ${index + 1}`];
+  });
 }

@@ -1,16 +1,10 @@
 import { useEventListener } from '@vueuse/core';
-import type { Ref } from 'vue';
 
 /**
  * Undo and redo of the whole bench by the keys everybody knows, also inside its fields: the field's own undo would not know of the other
  * fields.
  */
-export function useBenchKeys(input: {
-  root: Readonly<Ref<HTMLElement | null>>;
-  isActive: () => boolean;
-  undo: () => void;
-  redo: () => void;
-}): void {
+export function useBenchKeys(input: { isActive: () => boolean; undo: () => void; redo: () => void }): void {
   useEventListener(document, 'keydown', (event: KeyboardEvent) => {
     if (!input.isActive() || event.altKey || !(event.ctrlKey || event.metaKey)) return;
     const { target } = event;
