@@ -163,10 +163,12 @@ export type VersionList = Static<typeof VersionListSchema>;
 
 export const COMPARE_LIMITS = { min: 2, max: 4 } as const;
 
+const UUID_PATTERN = '[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}';
+
 export const CompareQuerySchema = Type.Object(
   {
     ids: Type.String({
-      pattern: '^[0-9a-f-]{36}(,[0-9a-f-]{36}){0,3}$',
+      pattern: `^${UUID_PATTERN}(,${UUID_PATTERN}){0,3}$`,
       description: 'one to four version ids, separated by commas',
     }),
   },

@@ -208,6 +208,14 @@ describe('an address', () => {
     },
   );
 
+  it.each([['-'.repeat(36)], ['g'.repeat(36)], [`${'0'.repeat(36)},`]])(
+    'with %s for an id in the query is told so, before the database is asked',
+    async (ids) => {
+      const answer = await manager.get(`/teams/${team.id}/versions`, { query: { ids } });
+      expect(answer.fieldErrors).toEqual(['#/ids pattern']);
+    },
+  );
+
   it('answers HEAD like GET, without a body', async () => {
     const answer = await supertest(app.baseUrl).head('/api/health');
     expect(answer.status).toBe(200);
